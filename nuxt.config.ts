@@ -1,0 +1,65 @@
+import { readdirSync } from 'node:fs'
+import { fileURLToPath } from 'node:url'
+
+const here = (path: string) => fileURLToPath(new URL(path, import.meta.url))
+/** Rooms of the desk are loaded by the desk alone, so that a public page does not carry their texts. */
+const deskRooms = new Set(['account', 'entry', 'bench', 'office', 'panel', 'registrar', 'desk', 'notices', 'people'])
+const publicRooms = readdirSync(here('./i18n/locales/en'))
+  .filter(file => file.endsWith('.json') && !deskRooms.has(file.replace('.json', '')))
+  .sort()
+
+export default defineNuxtConfig({
+  compatibilityDate: '2026-11-01',
+  srcDir: '.',
+  modules: ['@nuxtjs/tailwindcss', '@pinia/nuxt', '@nuxtjs/i18n', '@sidebase/nuxt-auth', '@nuxt/eslint'],
+  devtools: { enabled: false },
+  telemetry: false,
+  experimental: { checkOutdatedBuildInterval: false },
+  features: { inlineStyles: false },
+  ignore: ['.data/**', 'tests/**', 'db/**', 'seeds/**', 'scripts/**', 'docs/**'],
+  components: [{ path: '~/components', pathPrefix: true }],
+  css: ['~/assets/css/fonts.css', '~/assets/css/main.css'],
+  tailwindcss: { viewer: false, cssPath: false },
+  eslint: { config: { standalone: false } },
+  app: {
+    head: {
+      htmlAttrs: { lang: 'en' },
+      viewport: 'width=device-width, initial-scale=1',
+      link: [
+        { rel: 'icon', type: 'image/svg+xml', href: '/favicon.svg' },
+      ],
+      meta: [
+        { name: 'color-scheme', content: 'light dark' },
+        { name: 'theme-color', content: '#F6F1E7', media: '(prefers-color-scheme: light)' },
+        { name: 'theme-color', content: '#15181A', media: '(prefers-color-scheme: dark)' },
+      ],
+    },
+  },
+  i18n: {
+    strategy: 'prefix_except_default',
+    defaultLocale: 'en',
+    langDir: 'locales',
+    locales: [{ code: 'en', language: 'en-US', name: 'English', files: publicRooms.map(file => `en/${file}`) }],
+    detectBrowserLanguage: false,
+    compilation: { strictMessage: false },
+  },
+  auth: {
+    // The session is read on our own side, page by page: public pages never ask for one on the server.
+    disableServerSideAuth: true,
+    originEnvKey: 'AUTH_ORIGIN',
+    provider: { type: 'authjs', trustHost: false, defaultProvider: 'credentials', addDefaultCallbackUrl: false },
+    sessionRefresh: { enablePeriodically: false, enableOnWindowFocus: false },
+    globalAppMiddleware: false,
+  },
+  nitro: {
+    compressPublicAssets: true,
+    errorHandler: '~~/server/error.ts',
+    experimental: { asyncContext: false },
+    esbuild: { options: { target: 'node20' } },
+  },
+  routeRules: {
+    '/_nuxt/**': { headers: { 'cache-control': 'public, max-age=31536000, immutable' } },
+  },
+  typescript: { strict: true, typeCheck: false, tsConfig: { compilerOptions: { noUncheckedIndexedAccess: true } } },
+  vite: { build: { target: 'es2022' } },
+})
