@@ -1,0 +1,31 @@
+import { ASCII, EXACT, ID, UID, oneOf, table } from '../columns'
+
+export const { up, down } = table('users', `
+  ${ID},
+  ${UID},
+  email VARCHAR(254) ${EXACT} NOT NULL,
+  email_verified_at DATETIME(3) NULL,
+  password_hash VARCHAR(255) ${ASCII} NULL,
+  name VARCHAR(120) NOT NULL,
+  locale VARCHAR(12) ${ASCII} NOT NULL DEFAULT 'en',
+  district_id BIGINT UNSIGNED NULL,
+  phone VARCHAR(40) NULL,
+  address VARCHAR(300) NULL,
+  shop_name VARCHAR(120) NULL,
+  print_name VARCHAR(10) ${ASCII} NOT NULL DEFAULT 'full',
+  totp_secret_enc VARCHAR(255) ${ASCII} NULL,
+  totp_last_step BIGINT UNSIGNED NULL,
+  totp_enabled_at DATETIME(3) NULL,
+  created_at DATETIME(3) NOT NULL,
+  disabled_at DATETIME(3) NULL,
+  erased_at DATETIME(3) NULL,
+  CONSTRAINT uq_users_uid UNIQUE (uid),
+  CONSTRAINT uq_users_email UNIQUE (email),
+  INDEX ix_users_name (name),
+  INDEX ix_users_district (district_id),
+  CONSTRAINT fk_users_district FOREIGN KEY (district_id) REFERENCES districts (id),
+  ${oneOf('ck_users_print_name', 'print_name', ['full', 'initials', 'withheld'])},
+  CONSTRAINT ck_users_email CHECK (email LIKE '_%@_%' AND email NOT LIKE '% %'),
+  CONSTRAINT ck_users_name CHECK (CHAR_LENGTH(TRIM(name)) > 0),
+  CONSTRAINT ck_users_totp CHECK (totp_enabled_at IS NULL OR totp_secret_enc IS NOT NULL)
+`)

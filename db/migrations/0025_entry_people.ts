@@ -1,0 +1,32 @@
+import { ASCII, EXACT, ID, UID, oneOf, table } from '../columns'
+
+export const { up, down } = table('entry_people', `
+  ${ID},
+  ${UID},
+  entry_id BIGINT UNSIGNED NOT NULL,
+  part VARCHAR(10) ${ASCII} NOT NULL,
+  user_id BIGINT UNSIGNED NULL,
+  name VARCHAR(120) NOT NULL,
+  name_key VARCHAR(160) ${EXACT} NOT NULL,
+  address VARCHAR(300) NULL,
+  address_key VARCHAR(300) ${EXACT} NULL,
+  email VARCHAR(254) ${EXACT} NULL,
+  phone VARCHAR(40) NULL,
+  born_on DATE NULL,
+  died_on DATE NULL,
+  is_minor TINYINT(1) NOT NULL DEFAULT 0,
+  created_at DATETIME(3) NOT NULL,
+  erased_at DATETIME(3) NULL,
+  single_part VARCHAR(10) ${ASCII} GENERATED ALWAYS AS (IF(part IN ('hunter', 'finder', 'owner', 'club', 'guardian'), part, NULL)) STORED,
+  CONSTRAINT uq_entry_people_uid UNIQUE (uid),
+  CONSTRAINT uq_entry_people_single UNIQUE (entry_id, single_part),
+  INDEX ix_entry_people_entry (entry_id, part),
+  INDEX ix_entry_people_name (name_key),
+  INDEX ix_entry_people_address (address_key),
+  INDEX ix_entry_people_user (user_id),
+  INDEX ix_entry_people_email (email),
+  CONSTRAINT fk_entry_people_entry FOREIGN KEY (entry_id) REFERENCES entries (id),
+  CONSTRAINT fk_entry_people_user FOREIGN KEY (user_id) REFERENCES users (id),
+  ${oneOf('ck_entry_people_part', 'part', ['hunter', 'finder', 'owner', 'club', 'guide', 'guardian', 'heir', 'witness'])},
+  CONSTRAINT ck_entry_people_name CHECK (erased_at IS NOT NULL OR CHAR_LENGTH(TRIM(name)) > 0)
+`)

@@ -1,0 +1,5 @@
+import { alter } from '../columns'
+
+export const { up, down } = alter('entries',
+  'ADD CONSTRAINT fk_entries_signed_sheet FOREIGN KEY (signed_sheet_id, id) REFERENCES sheets (id, entry_id)',
+  'DROP FOREIGN KEY fk_entries_signed_sheet')

@@ -1,0 +1,30 @@
+import { ASCII, ID, UID, oneOf, table } from '../columns'
+
+export const { up, down } = table('documents', `
+  ${ID},
+  ${UID},
+  entry_id BIGINT UNSIGNED NOT NULL,
+  file_id BIGINT UNSIGNED NOT NULL,
+  thumb_file_id BIGINT UNSIGNED NULL,
+  kind VARCHAR(30) ${ASCII} NOT NULL,
+  name VARCHAR(200) NOT NULL,
+  width INT UNSIGNED NULL,
+  height INT UNSIGNED NULL,
+  pages SMALLINT UNSIGNED NULL,
+  sort SMALLINT UNSIGNED NOT NULL DEFAULT 0,
+  released TINYINT(1) NOT NULL DEFAULT 0,
+  scan_state VARCHAR(12) ${ASCII} NOT NULL DEFAULT 'not_scanned',
+  uploaded_by BIGINT UNSIGNED NULL,
+  created_at DATETIME(3) NOT NULL,
+  removed_at DATETIME(3) NULL,
+  CONSTRAINT uq_documents_uid UNIQUE (uid),
+  INDEX ix_documents_entry (entry_id, removed_at, sort, id),
+  INDEX ix_documents_file (file_id),
+  INDEX ix_documents_thumb (thumb_file_id),
+  INDEX ix_documents_uploaded_by (uploaded_by, created_at),
+  CONSTRAINT fk_documents_entry FOREIGN KEY (entry_id) REFERENCES entries (id),
+  CONSTRAINT fk_documents_file FOREIGN KEY (file_id) REFERENCES files (id),
+  CONSTRAINT fk_documents_thumb FOREIGN KEY (thumb_file_id) REFERENCES files (id),
+  CONSTRAINT fk_documents_uploaded_by FOREIGN KEY (uploaded_by) REFERENCES users (id),
+  ${oneOf('ck_documents_scan_state', 'scan_state', ['not_scanned', 'clean', 'infected'])}
+`)

@@ -1,0 +1,30 @@
+import { ASCII, EXACT, ID, UID, oneOf, table } from '../columns'
+
+export const { up, down } = table('checkouts', `
+  ${ID},
+  ${UID},
+  entry_id BIGINT UNSIGNED NOT NULL,
+  user_id BIGINT UNSIGNED NOT NULL,
+  provider_id VARCHAR(255) ${ASCII} NULL,
+  amount_minor BIGINT UNSIGNED NOT NULL,
+  currency CHAR(3) ${ASCII} NOT NULL,
+  fee_version INT UNSIGNED NOT NULL,
+  state VARCHAR(10) ${ASCII} NOT NULL DEFAULT 'open',
+  url VARCHAR(2000) ${EXACT} NULL,
+  created_at DATETIME(3) NOT NULL,
+  expires_at DATETIME(3) NULL,
+  finished_at DATETIME(3) NULL,
+  running_entry_id BIGINT UNSIGNED GENERATED ALWAYS AS (IF(state = 'open', entry_id, NULL)) STORED,
+  CONSTRAINT uq_checkouts_uid UNIQUE (uid),
+  CONSTRAINT uq_checkouts_provider UNIQUE (provider_id),
+  CONSTRAINT uq_checkouts_running UNIQUE (running_entry_id),
+  INDEX ix_checkouts_entry (entry_id, created_at),
+  INDEX ix_checkouts_state (state, created_at),
+  INDEX ix_checkouts_user (user_id),
+  INDEX ix_checkouts_fee (fee_version, currency),
+  CONSTRAINT fk_checkouts_entry FOREIGN KEY (entry_id) REFERENCES entries (id),
+  CONSTRAINT fk_checkouts_user FOREIGN KEY (user_id) REFERENCES users (id),
+  CONSTRAINT fk_checkouts_fee FOREIGN KEY (fee_version, currency) REFERENCES fee_versions (version, currency),
+  ${oneOf('ck_checkouts_state', 'state', ['open', 'paid', 'failed', 'expired', 'cancelled'])},
+  CONSTRAINT ck_checkouts_finished CHECK ((state = 'open') = (finished_at IS NULL))
+`)
