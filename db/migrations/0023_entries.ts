@@ -18,7 +18,7 @@ export const { up, down } = table('entries', `
   reviewer_user_id BIGINT UNSIGNED NULL,
   district_id BIGINT UNSIGNED NULL,
   district_side VARCHAR(20) ${ASCII} NULL,
-  taken_first_on DATE NOT NULL DEFAULT '9999-12-31',
+  taken_first_on DATE NOT NULL DEFAULT '1000-01-01',
   taken_last_on DATE NOT NULL DEFAULT '9999-12-31',
   taken_precision VARCHAR(8) ${ASCII} NOT NULL DEFAULT 'unknown',
   method VARCHAR(16) ${ASCII} NULL,
@@ -46,7 +46,7 @@ export const { up, down } = table('entries', `
   hold_reason VARCHAR(1000) NULL,
   client_content_hash CHAR(64) ${ASCII} NULL,
   created_at DATETIME(3) NOT NULL,
-  open_animal_id BIGINT UNSIGNED GENERATED ALWAYS AS (IF(state IN ('accepted', 'challenged', 'declined', 'withdrawn', 'struck'), NULL, animal_id)) STORED,
+  open_animal_id BIGINT UNSIGNED GENERATED ALWAYS AS (IF(state IN ('accepted', 'challenged', 'declined', 'lapsed', 'withdrawn', 'struck'), NULL, animal_id)) STORED,
   listed_animal_id BIGINT UNSIGNED GENERATED ALWAYS AS (IF(state IN ('accepted', 'challenged'), animal_id, NULL)) STORED,
   CONSTRAINT uq_entries_uid UNIQUE (uid),
   CONSTRAINT uq_entries_open_animal UNIQUE (open_animal_id),
@@ -90,10 +90,10 @@ export const { up, down } = table('entries', `
   CONSTRAINT ck_entries_original CHECK (original_origin IS NULL OR origin = 'inherited'),
   CONSTRAINT ck_entries_version CHECK (version > 0),
   CONSTRAINT ck_entries_taken CHECK (CASE taken_precision
-    WHEN 'day' THEN taken_first_on = taken_last_on AND taken_first_on < '9999-12-31'
+    WHEN 'day' THEN taken_first_on = taken_last_on
     WHEN 'month' THEN DAYOFMONTH(taken_first_on) = 1 AND taken_last_on = LAST_DAY(taken_first_on)
     WHEN 'year' THEN DAYOFYEAR(taken_first_on) = 1 AND YEAR(taken_last_on) = YEAR(taken_first_on) AND MONTH(taken_last_on) = 12 AND DAYOFMONTH(taken_last_on) = 31
-    ELSE taken_first_on = '9999-12-31' AND taken_last_on = '9999-12-31' END),
+    ELSE taken_first_on = '1000-01-01' AND taken_last_on > taken_first_on END),
   CONSTRAINT ck_entries_net CHECK ((net16 IS NULL) = (gross16 IS NULL) AND (net16 IS NULL OR net16 <= gross16)),
   CONSTRAINT ck_entries_signed CHECK (state IN ('draft', 'measuring', 'withdrawn') OR source = 'taken_over' OR (signed_sheet_id IS NOT NULL AND net16 IS NOT NULL)),
   CONSTRAINT ck_entries_submitted CHECK (state IN ('draft', 'measuring', 'certified', 'lapsed', 'withdrawn') OR source = 'taken_over' OR (submitted_at IS NOT NULL AND term_id IS NOT NULL AND district_id IS NOT NULL)),
