@@ -1,6 +1,6 @@
 import knex, { type Knex } from 'knex'
 import mysql2, { type ConnectionOptions } from 'mysql2'
-import type { DatabaseConfig } from './config'
+import { databaseConfig, type DatabaseConfig } from './config'
 import type {} from './tables'
 
 /** How much longer than the server the client waits before it takes the connection for dead. */
@@ -103,4 +103,9 @@ export function knexConfig(config: DatabaseConfig): Knex.Config {
  */
 export function connect(config: DatabaseConfig): Knex {
   return knex(knexConfig(config))
+}
+
+/** Opens a pool on an address such as DATABASE_URL. Throws an Error with one clear line for one that is none. */
+export function openDatabase(url: string, options: { poolSize?: number } = {}): Knex {
+  return connect(databaseConfig(url, options.poolSize ? { poolMax: options.poolSize } : {}))
 }

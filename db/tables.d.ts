@@ -1086,6 +1086,7 @@ export interface SheetsRow {
   gross16: number | null
   measured_on: string | null
   measurer_user_id: number | null
+  measurer_name: string | null
   owner_user_id: number | null
   dried_since: string | null
   dried_from: string | null
@@ -1115,6 +1116,7 @@ export interface SheetsInsert {
   gross16?: number | null
   measured_on?: string | null
   measurer_user_id?: number | null
+  measurer_name?: string | null
   owner_user_id?: number | null
   dried_since?: string | null
   dried_from?: string | null

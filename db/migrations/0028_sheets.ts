@@ -15,6 +15,7 @@ export const { up, down } = table('sheets', `
   gross16 INT NULL,
   measured_on DATE NULL,
   measurer_user_id BIGINT UNSIGNED NULL,
+  measurer_name VARCHAR(120) NULL,
   owner_user_id BIGINT UNSIGNED NULL,
   dried_since DATE NULL,
   dried_from VARCHAR(20) ${ASCII} NULL,
@@ -41,7 +42,7 @@ export const { up, down } = table('sheets', `
   ${oneOf('ck_sheets_kind', 'kind', ['entry', 'panel_a', 'panel_b', 'panel_joint', 'rough'])},
   ${oneOf('ck_sheets_state', 'state', ['open', 'signed', 'replaced'])},
   CONSTRAINT ck_sheets_entry CHECK (entry_id IS NOT NULL OR kind = 'rough'),
-  CONSTRAINT ck_sheets_signed CHECK (state = 'open' OR (signed_at IS NOT NULL AND hash IS NOT NULL AND measured_on IS NOT NULL AND measurer_user_id IS NOT NULL AND net16 IS NOT NULL AND kind <> 'rough')),
+  CONSTRAINT ck_sheets_signed CHECK (state = 'open' OR (signed_at IS NOT NULL AND hash IS NOT NULL AND measured_on IS NOT NULL AND (measurer_user_id IS NOT NULL OR measurer_name IS NOT NULL) AND net16 IS NOT NULL AND kind <> 'rough')),
   CONSTRAINT ck_sheets_open CHECK (state <> 'open' OR (signed_at IS NULL AND hash IS NULL)),
   CONSTRAINT ck_sheets_figures CHECK ((net IS NULL) = (net16 IS NULL) AND (net IS NULL) = (gross_all IS NULL) AND (net IS NULL) = (gross IS NULL) AND (net IS NULL) = (gross16 IS NULL)),
   CONSTRAINT ck_sheets_net CHECK (net IS NULL OR (net <= gross_all AND gross <= gross_all AND net16 <= gross16))
