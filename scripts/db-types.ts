@@ -14,7 +14,8 @@ const config = databaseConfig(url, { statementTimeout: 0 })
 const scratch = `${config.database}_types`
 
 const server = connect(config)
-await server.raw(`CREATE OR REPLACE DATABASE \`${scratch}\` CHARACTER SET utf8mb4 COLLATE utf8mb4_uca1400_nopad_ai_ci`)
+await server.raw(`DROP DATABASE IF EXISTS \`${scratch}\``)
+await server.raw(`CREATE DATABASE \`${scratch}\` CHARACTER SET utf8mb4 COLLATE utf8mb4_uca1400_nopad_ai_ci`)
 const db = connect({ ...config, database: scratch })
 try {
   await migrateUp(db)
