@@ -92,8 +92,12 @@ export function knexConfig(config: DatabaseConfig): Knex.Config {
       },
     } satisfies Knex.PoolConfig,
     acquireConnectionTimeout: config.acquireTimeout,
-    // What cannot be acquired is thrown to the caller; a second line from the pool would be noise.
-    log: { error: () => {} },
+    log: {
+      // What cannot be acquired is thrown to the caller; a second telling from the pool would be noise.
+      warn: (message: unknown) => {
+        if (!String(message).startsWith('Acquire connection error')) console.warn(message)
+      },
+    },
   }
 }
 

@@ -280,7 +280,7 @@ export interface DocumentsRow {
   entry_id: number
   file_id: number
   thumb_file_id: number | null
-  kind: string
+  kind: 'photo_front' | 'photo_left' | 'photo_right' | 'photo_field' | 'tag_or_licence' | 'proof_of_possession' | 'account' | 'genetic_proof' | 'condition' | 'letter' | 'other'
   name: string
   width: number | null
   height: number | null
@@ -299,7 +299,7 @@ export interface DocumentsInsert {
   entry_id: number
   file_id: number
   thumb_file_id?: number | null
-  kind: string
+  kind: 'photo_front' | 'photo_left' | 'photo_right' | 'photo_field' | 'tag_or_licence' | 'proof_of_possession' | 'account' | 'genetic_proof' | 'condition' | 'letter' | 'other'
   name: string
   width?: number | null
   height?: number | null

@@ -26,5 +26,6 @@ export const { up, down } = table('documents', `
   CONSTRAINT fk_documents_file FOREIGN KEY (file_id) REFERENCES files (id),
   CONSTRAINT fk_documents_thumb FOREIGN KEY (thumb_file_id) REFERENCES files (id),
   CONSTRAINT fk_documents_uploaded_by FOREIGN KEY (uploaded_by) REFERENCES users (id),
+  ${oneOf('ck_documents_kind', 'kind', ['photo_front', 'photo_left', 'photo_right', 'photo_field', 'tag_or_licence', 'proof_of_possession', 'account', 'genetic_proof', 'condition', 'letter', 'other'])},
   ${oneOf('ck_documents_scan_state', 'scan_state', ['not_scanned', 'clean', 'infected'])}
 `)

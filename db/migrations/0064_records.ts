@@ -66,6 +66,6 @@ export const { up, down } = table('records', `
   CONSTRAINT ck_records_net CHECK (net16 > 0 AND net16 <= gross16),
   CONSTRAINT ck_records_sheet CHECK (sheet_id IS NOT NULL OR source = 'taken_over'),
   CONSTRAINT ck_records_original CHECK (original_origin IS NULL OR origin = 'inherited'),
-  CONSTRAINT ck_records_found_method CHECK (method IS NULL OR origin = 'hunted' OR original_origin = 'hunted'),
+  CONSTRAINT ck_records_found_method CHECK (method IS NULL OR origin = 'hunted' OR original_origin <=> 'hunted'),
   CONSTRAINT ck_records_taken CHECK (taken_first_on <= taken_last_on AND (taken_precision = 'unknown') = (taken_first_on = '1000-01-01'))
 `)
