@@ -4,10 +4,11 @@ import { refusedBy } from '../../db/errors'
 import { useDatabase } from '../support/database'
 import { aRecord, aRegistry, aSheet, aUser, anAnimal, anEntry, hash, NOW, refusal, SIGNED, type TestRegistry, uid } from './fixtures'
 
+const own = useDatabase()
 let db: Knex
 let registry: TestRegistry
 beforeAll(async () => {
-  db = await testDatabase()
+  db = own.db
   registry = await aRegistry(db)
 })
 
