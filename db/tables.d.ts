@@ -1461,7 +1461,7 @@ export interface WorkflowTransitionsRow {
   code: string
   from_states: string
   to_state: string | null
-  roles: string
+  parties: string
   guards: string
   effects: string
   comment_required: 0 | 1
@@ -1474,7 +1474,7 @@ export interface WorkflowTransitionsInsert {
   code: string
   from_states: string
   to_state?: string | null
-  roles: string
+  parties: string
   guards: string
   effects: string
   comment_required?: boolean | 0 | 1

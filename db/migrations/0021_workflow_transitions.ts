@@ -5,7 +5,7 @@ export const { up, down } = table('workflow_transitions', `
   code VARCHAR(30) ${ASCII} NOT NULL,
   from_states JSON NOT NULL,
   to_state VARCHAR(20) ${ASCII} NULL,
-  roles JSON NOT NULL,
+  parties JSON NOT NULL,
   guards JSON NOT NULL,
   effects JSON NOT NULL,
   comment_required TINYINT(1) NOT NULL DEFAULT 0,
