@@ -18,8 +18,8 @@ export default defineNuxtConfig({
   features: { inlineStyles: false },
   ignore: ['.data/**', 'tests/**', 'db/**', 'seeds/**', 'scripts/**', 'docs/**'],
   components: [{ path: '~/components', pathPrefix: true }],
-  css: ['~/assets/css/fonts.css', '~/assets/css/main.css'],
-  tailwindcss: { viewer: false, cssPath: false },
+  css: ['~/assets/css/fonts.css'],
+  tailwindcss: { viewer: false, cssPath: '~/assets/css/main.css' },
   eslint: { config: { standalone: false } },
   app: {
     head: {
@@ -53,9 +53,11 @@ export default defineNuxtConfig({
   },
   nitro: {
     compressPublicAssets: true,
-    errorHandler: '~~/server/error.ts',
-    experimental: { asyncContext: false },
     esbuild: { options: { target: 'node20' } },
+  },
+  hooks: {
+    // Ours answers for the API and leaves pages to Nuxt's own.
+    'nitro:config': (config) => { config.errorHandler = [here('./server/error.ts'), ...[config.errorHandler ?? []].flat()] },
   },
   routeRules: {
     '/_nuxt/**': { headers: { 'cache-control': 'public, max-age=31536000, immutable' } },

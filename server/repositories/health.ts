@@ -1,0 +1,13 @@
+import type { Knex } from 'knex'
+import { parseSqlTime } from '../../db/time'
+
+export async function latestMigration(db: Knex): Promise<string | null> {
+  const row = await db('knex_migrations').orderBy('id', 'desc').first('name')
+  return row ? String(row.name) : null
+}
+
+/** When a worker last said that it lives. `worker_heartbeats` holds one row a process. */
+export async function lastHeartbeat(db: Knex): Promise<Date | null> {
+  const row = await db('worker_heartbeats').max('seen_at as seen_at').first()
+  return row?.seen_at ? parseSqlTime(String(row.seen_at)) : null
+}

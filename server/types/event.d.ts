@@ -1,0 +1,14 @@
+import type { Actor } from '../../shared/domain/access/roles'
+import type { Registry } from '../composition'
+
+declare module 'h3' {
+  interface H3EventContext {
+    /** The registry that the request's host leads to. */
+    registry: Registry
+    requestId: string
+    /** Read once a request, by `actorOf`. */
+    actor?: Promise<Actor>
+  }
+}
+
+export {}
