@@ -1,0 +1,23 @@
+import type { Role } from '#shared/domain/access/roles'
+
+/** Who is signed in, as `/api/me` says. Asked by pages of the desk; a public page asks only afterwards, in the browser. */
+export interface Me {
+  readonly signedIn: boolean
+  readonly id: string | null
+  readonly name: string
+  readonly email: string
+  readonly roles: readonly Role[]
+  readonly secondFactor: boolean
+}
+
+const NOBODY: Me = { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false }
+
+export function useMe() {
+  const me = useState<Me | null>('me', () => null)
+  const request = useRequestFetch()
+  async function load(again = false): Promise<Me> {
+    if (!me.value || again) me.value = await request<Me>('/api/me').catch(() => NOBODY)
+    return me.value
+  }
+  return { me, load, forget: () => { me.value = null } }
+}

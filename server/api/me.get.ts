@@ -1,0 +1,9 @@
+import { defineRoute } from '../utils/defineRoute'
+
+/** Who is signed in. Answers a visitor too, so that a public page can ask without an error. */
+export default defineRoute({
+  access: 'public',
+  handler: ({ actor }) => actor
+    ? { signedIn: true, id: actor.uid, name: actor.name, email: actor.email, roles: actor.roles, secondFactor: actor.secondFactor }
+    : { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false },
+})

@@ -1,0 +1,12 @@
+import type { Role } from '../domain/access/roles'
+
+/** Who may open a page. The server decides again at every route; this spares a reader a page that would be empty. */
+export type PageAccess = 'public' | 'signedIn' | readonly Role[]
+
+declare module '#app' {
+  interface PageMeta {
+    access?: PageAccess
+  }
+}
+
+export {}
