@@ -9,7 +9,7 @@ const where = (slot: Slot) => ({ user_id: slot.userId, route: slot.route, key: s
 export async function insert(db: Knex, slot: Slot, now: Date): Promise<boolean> {
   // A plain INSERT whose conflict changes nothing: one affected row means that it was ours.
   const [result] = await db.raw(
-    `INSERT INTO idempotency_keys (user_id, route, `key`, body_hash, state, created_at)
+    `INSERT INTO idempotency_keys (user_id, route, \`key\`, body_hash, state, created_at)
      VALUES (?, ?, ?, ?, 'running', ?) ON DUPLICATE KEY UPDATE user_id = user_id`,
     [slot.userId, slot.route, slot.key, slot.bodyHash, sqlTime(now)],
   ) as [{ affectedRows: number }]
