@@ -1,0 +1,11 @@
+/** Measuring and scoring: exact, explained, the same in the browser and on the server. */
+export * from './units'
+export * from './sheet'
+export * from './catalogue'
+export * from './measurements'
+export * from './score'
+export * from './steps'
+export * from './roundDown'
+export * from './rough'
+export * from './keyFigures'
+export * from './slips'
