@@ -1440,6 +1440,18 @@ export interface UserTokensInsert {
   used_at?: string | null
 }
 
+export interface WorkerHeartbeatsRow {
+  name: string
+  started_at: string
+  seen_at: string
+}
+
+export interface WorkerHeartbeatsInsert {
+  name: string
+  started_at: string
+  seen_at: string
+}
+
 export interface WorkflowStatesRow {
   version_id: number
   code: string
@@ -1557,6 +1569,7 @@ declare module 'knex/types/tables' {
     user_roles: Knex.CompositeTableType<UserRolesRow, Given<UserRolesInsert>, Partial<Given<UserRolesInsert>>>
     user_sessions: Knex.CompositeTableType<UserSessionsRow, Given<UserSessionsInsert>, Partial<Given<UserSessionsInsert>>>
     user_tokens: Knex.CompositeTableType<UserTokensRow, Given<UserTokensInsert>, Partial<Given<UserTokensInsert>>>
+    worker_heartbeats: Knex.CompositeTableType<WorkerHeartbeatsRow, Given<WorkerHeartbeatsInsert>, Partial<Given<WorkerHeartbeatsInsert>>>
     workflow_states: Knex.CompositeTableType<WorkflowStatesRow, Given<WorkflowStatesInsert>, Partial<Given<WorkflowStatesInsert>>>
     workflow_transitions: Knex.CompositeTableType<WorkflowTransitionsRow, Given<WorkflowTransitionsInsert>, Partial<Given<WorkflowTransitionsInsert>>>
     workflow_versions: Knex.CompositeTableType<WorkflowVersionsRow, Given<WorkflowVersionsInsert>, Partial<Given<WorkflowVersionsInsert>>>

@@ -72,6 +72,7 @@ import * as m0069_texts from './0069_texts'
 import * as m0070_idempotency_keys from './0070_idempotency_keys'
 import * as m0071_settings from './0071_settings'
 import * as m0072_erasures from './0072_erasures'
+import * as m0073_worker_heartbeats from './0073_worker_heartbeats'
 
 export type { Migration }
 
@@ -149,4 +150,5 @@ export const MIGRATIONS: readonly (readonly [name: string, migration: Migration]
   ['0070_idempotency_keys', m0070_idempotency_keys],
   ['0071_settings', m0071_settings],
   ['0072_erasures', m0072_erasures],
+  ['0073_worker_heartbeats', m0073_worker_heartbeats],
 ]

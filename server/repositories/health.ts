@@ -2,7 +2,7 @@ import type { Knex } from 'knex'
 import { parseSqlTime } from '../../db/time'
 
 export async function latestMigration(db: Knex): Promise<string | null> {
-  const row = await db('knex_migrations').orderBy('id', 'desc').first('name')
+  const row = await db('schema_migrations').orderBy('id', 'desc').first('name')
   return row ? String(row.name) : null
 }
 
