@@ -60,12 +60,13 @@ export interface InexactDate {
   readonly precision: DatePrecision
 }
 
-/** Both days of a date of which nothing is known. It sorts after every known date, so it never stands first in a shared rank. */
-export const UNKNOWN_DAY: Day = '9999-12-31'
+/** First and last day of a date of which nothing is known. */
+export const EARLIEST_DAY: Day = '1000-01-01'
+export const LATEST_DAY: Day = '9999-12-31'
 
 /** Reads `YYYY`, `YYYY-MM`, `YYYY-MM-DD` or `unknown`. Null for anything else, so that the caller can name the field. */
 export function parseInexactDate(text: string): InexactDate | null {
-  if (text === 'unknown') return { first: UNKNOWN_DAY, last: UNKNOWN_DAY, precision: 'unknown' }
+  if (text === 'unknown') return { first: EARLIEST_DAY, last: LATEST_DAY, precision: 'unknown' }
   if (/^\d{4}$/.test(text)) return isDay(`${text}-01-01`) ? { first: `${text}-01-01`, last: `${text}-12-31`, precision: 'year' } : null
   if (/^\d{4}-\d{2}$/.test(text)) {
     const first = `${text}-01`

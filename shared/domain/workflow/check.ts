@@ -39,13 +39,13 @@ interface Protection {
   readonly where: (row: { parties: readonly string[], effects: readonly string[] }) => boolean
 }
 
-/** Parties that decide about somebody else's animal. */
-const DECIDING: readonly Party[] = ['assigned_measurer', 'reviewer', 'chair', 'judge_pair']
+/** Parties that decide about somebody else's animal. A measurer decides by signing, not by handing it back. */
+const DECIDING: readonly Party[] = ['reviewer', 'chair', 'judge_pair']
 const hasParty = (parties: readonly string[], wanted: readonly Party[]) => wanted.some(party => parties.includes(party))
 
 /** Where guards for stake, signature and quorum belong, told by what a transition does and who performs it. */
 const PROTECTIONS: readonly Protection[] = [
-  { guard: 'no_stake', where: row => hasParty(row.parties, DECIDING) || row.effects.includes('amend_record') },
+  { guard: 'no_stake', where: row => hasParty(row.parties, DECIDING) || row.effects.includes('lock_sheet') || row.effects.includes('amend_record') },
   { guard: 'measurer_without_stake', where: row => row.effects.includes('assign_measurer') && !row.effects.includes('to_bench_when_named') },
   { guard: 'walk_in_measurable', where: row => row.effects.includes('to_bench_when_named') },
   { guard: 'signed_by_password', where: row => row.effects.includes('lock_sheet') },

@@ -81,9 +81,11 @@ const STAKE_ACT_OF: Readonly<Partial<Record<Party, StakeAct>>> = {
 
 function stakesOfPerformer({ facts, performer, parties }: GuardContext) {
   if (performer.kind !== 'person') return []
-  const acts = [...parties].flatMap(party => STAKE_ACT_OF[party] ?? [])
-  // somebody acts in one right at a time: free of stakes in one of them is enough, except that an owner never is
-  const byAct = acts.map(act => stakesOf(facts.stakes, performer.keys, act))
+  // somebody acts in one right at a time: it is enough to be free of stakes in one of them
+  const byAct = [...parties].map((party) => {
+    const act = STAKE_ACT_OF[party]
+    return act ? stakesOf(facts.stakes, performer.keys, act) : []
+  })
   return byAct.find(stakes => stakes.length === 0) ?? byAct[0] ?? []
 }
 
@@ -207,7 +209,7 @@ const CHECKS: Readonly<Record<GuardName, Guard>> = {
   confirmed: ({ input }) => unless(input.confirm === true),
   withdrawal_agreed: ({ facts, parties }) => {
     const needsChair = facts.onHold || facts.state === 'challenged'
-    return unless(needsChair ? parties.has('chair') && facts.withdrawalAsked : parties.has('entrant'))
+    return unless(needsChair ? parties.has('chair') && !parties.has('entrant') && facts.withdrawalAsked : parties.has('entrant'))
   },
 
   report_checked: ({ facts }) => unless(facts.reportChecked),
