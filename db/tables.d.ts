@@ -1500,6 +1500,7 @@ export interface WorkflowVersionsRow {
   created_at: string
   created_by: number | null
   note: string | null
+  limits: string
 }
 
 export interface WorkflowVersionsInsert {
@@ -1508,6 +1509,7 @@ export interface WorkflowVersionsInsert {
   created_at: string
   created_by?: number | null
   note?: string | null
+  limits?: string
 }
 
 declare module 'knex/types/tables' {

@@ -73,6 +73,7 @@ import * as m0070_idempotency_keys from './0070_idempotency_keys'
 import * as m0071_settings from './0071_settings'
 import * as m0072_erasures from './0072_erasures'
 import * as m0073_worker_heartbeats from './0073_worker_heartbeats'
+import * as m0075_workflow_versions_limits from './0075_workflow_versions_limits'
 
 export type { Migration }
 
@@ -151,4 +152,5 @@ export const MIGRATIONS: readonly (readonly [name: string, migration: Migration]
   ['0071_settings', m0071_settings],
   ['0072_erasures', m0072_erasures],
   ['0073_worker_heartbeats', m0073_worker_heartbeats],
+  ['0075_workflow_versions_limits', m0075_workflow_versions_limits],
 ]

@@ -58,8 +58,13 @@ export interface LineComparison {
 
 type Figure = number | 'absent' | null
 
+function distance(a: Figure, b: Figure): number | null {
+  if (typeof a === 'number' && typeof b === 'number') return Math.abs(a - b)
+  return a === b ? 0 : null
+}
+
 function compare(line: MeasuredLine, side: LineSide, place: number | null, a: Figure, b: Figure): LineComparison {
-  const apart = typeof a === 'number' && typeof b === 'number' ? Math.abs(a - b) : a === b ? 0 : null
+  const apart = distance(a, b)
   return { line: line.id, side, place, a, b, apart, beyond: apart === null || apart > REMEASURE_LIMITS[line.nature] }
 }
 
