@@ -6,6 +6,8 @@ export type PageAccess = 'public' | 'signedIn' | readonly Role[]
 declare module '#app' {
   interface PageMeta {
     access?: PageAccess
+    /** `desk`: the page speaks the desk's words although it stands in another layout. */
+    texts?: 'desk'
   }
 }
 
