@@ -46,7 +46,7 @@ export async function api<T>(path: string, options: ApiOptions = {}): Promise<T>
   }
   catch (error) {
     if (error instanceof FetchError && error.data && typeof error.data === 'object' && 'code' in error.data) {
-      throw new ApiError({ errors: [], ...error.data as Omit<ApiProblem, 'errors'> })
+      throw new ApiError({ errors: [], ...error.data } as unknown as ApiProblem)
     }
     throw new ApiError({ status: 0, code: 'offline', detail: t('common.offline'), errors: [] })
   }

@@ -8,6 +8,6 @@ export async function latestMigration(db: Knex): Promise<string | null> {
 
 /** When a worker last said that it lives. `worker_heartbeats` holds one row a process. */
 export async function lastHeartbeat(db: Knex): Promise<Date | null> {
-  const row = await db('worker_heartbeats').max('seen_at as seen_at').first()
-  return row?.seen_at ? parseSqlTime(String(row.seen_at)) : null
+  const row: { seen_at?: string } | undefined = await db('worker_heartbeats').max({ seen_at: 'seen_at' }).first()
+  return row?.seen_at ? parseSqlTime(row.seen_at) : null
 }

@@ -1,13 +1,17 @@
-import { compile, createCoreContext, registerMessageCompiler, translate } from '@intlify/core-base'
+import { compile, createCoreContext, registerMessageCompiler, registerMessageResolver, resolveValue, translate } from '@intlify/core-base'
 import en from '../../../i18n/locales/en/index'
 
 registerMessageCompiler(compile)
+registerMessageResolver(resolveValue)
 
 const messages = { en } as const
 export type Locale = keyof typeof messages
 export const DEFAULT_LOCALE: Locale = 'en'
 
-const contexts = new Map<Locale, ReturnType<typeof createCoreContext>>()
+/** The library types its overloads by the messages themselves, deeper than the compiler follows. */
+const say = translate as unknown as (context: unknown, key: string, named: object, options: { plural?: number }) => unknown
+
+const contexts = new Map<Locale, unknown>()
 
 function contextFor(locale: Locale) {
   let context = contexts.get(locale)
@@ -31,8 +35,7 @@ export function localeOf(value: string | null | undefined): Locale {
  * @returns the sentence, or the key itself when there is no such text
  */
 export function t(locale: string | null | undefined, key: string, params: Readonly<Record<string, unknown>> = {}): string {
-  const plural = typeof params.count === 'number' ? [params.count] : []
-  const said = translate(contextFor(localeOf(locale)) as never, key, params as never, ...plural as never[])
+  const said = say(contextFor(localeOf(locale)), key, params, typeof params.count === 'number' ? { plural: params.count } : {})
   return typeof said === 'string' ? said : key
 }
 
