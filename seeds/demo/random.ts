@@ -1,3 +1,5 @@
+import { uuidv7 } from '#shared/uuid'
+
 /** A stream of numbers that is the same for the same label, on every machine. */
 export interface Random {
   /** uniform in [0, 1) */
@@ -70,3 +72,6 @@ export function randomFor(label: string): Random {
   }
   return random
 }
+
+/** A UUIDv7 (RFC 9562) for something that began then. */
+export const uidAt = (at: Date, random: Random): string => uuidv7(at.getTime(), random.bytes(16))

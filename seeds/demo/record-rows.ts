@@ -1,0 +1,148 @@
+import { addressKey, nameKey } from '#shared/domain/fold'
+import { recordTokens, shownName, sortName } from '#shared/domain/lists'
+import { checkMeasurements, keyFigures, type Measurements, score, type Score, type SheetDefinition, STEPS_PER_INCH } from '#shared/domain/measuring/index'
+import { sqlTime } from '../../db/time'
+import type { Head } from './heads'
+import type { Cast } from './persons'
+import type { PlannedRecord } from './plan'
+import { type Random, uidAt } from './random'
+import type { Row, Rows } from './rows'
+import type { SocietyIds } from './society-data'
+
+/** A sheet with its score in the steps of its definition, and its figures in sixteenths of an inch. */
+export interface ScoredSheet {
+  readonly definition: SheetDefinition
+  readonly measurements: Measurements
+  readonly score: Score
+  readonly net16: number
+  readonly gross16: number
+}
+
+export function scoredSheet(definition: SheetDefinition, head: Head): ScoredSheet {
+  const measurements = checkMeasurements(definition, head)
+  const result = score(definition, measurements)
+  const in16 = 16 / STEPS_PER_INCH[definition.step]
+  return { definition, measurements, score: result, net16: result.net * in16, gross16: result.grossAll * in16 }
+}
+
+/** One planned record with its numbers and its people. */
+export interface Subject {
+  readonly plan: PlannedRecord
+  readonly animalId: number
+  readonly entryId: number
+  readonly recordId: number
+  readonly recordNo: number
+  readonly cast: Cast
+  /** whether the month of taking may be public */
+  readonly monthPublic: boolean
+  readonly random: Random
+}
+
+export interface Place {
+  readonly rows: Rows
+  readonly ids: SocietyIds
+  readonly workflowVersion: number
+}
+
+/** The animal and its entry, as a draft: what makes it more needs a sheet, and a sheet needs the entry. */
+export function addEntry(subject: Subject, place: Place, begunAt: Date, rest: Row<'entries'> = {}): void {
+  const { plan, cast, random } = subject
+  const { rows, ids } = place
+  const at = sqlTime(begunAt)
+  const category = ids.category.get(plan.category)!
+  const onTheLine = category.species === 'whitetail' && ['otterstone', 'thornwether'].includes(plan.district)
+  rows.add('animals', { id: subject.animalId, uid: uidAt(begunAt, random), species_id: category.speciesId, created_at: at })
+  rows.add('entries', {
+    id: subject.entryId,
+    uid: uidAt(begunAt, random),
+    animal_id: subject.animalId,
+    class_id: category.id,
+    origin: plan.origin,
+    original_origin: plan.originalOrigin,
+    source: plan.way === 'certified' ? 'certified' : 'taken_over',
+    workflow_version_id: place.workflowVersion,
+    state: 'draft',
+    state_since: at,
+    owner_user_id: cast.owner?.userId ?? null,
+    begun_by_user_id: cast.owner?.userId ?? null,
+    measurer_user_id: null,
+    reviewer_user_id: null,
+    district_id: ids.district[plan.district],
+    district_side: onTheLine ? 'east' : null,
+    taken_first_on: plan.taken.first,
+    taken_last_on: plan.taken.last,
+    taken_precision: plan.taken.precision,
+    method: plan.method,
+    sex: plan.sex,
+    guided: plan.origin === 'hunted' ? (cast.people.some(person => person.part === 'guide') ? 1 : 0) : null,
+    hunter_printed_as: cast.printedAs,
+    month_public: subject.monthPublic ? 1 : 0,
+    dried_since: null,
+    dried_from: null,
+    term_id: null,
+    fee_version: null,
+    submitted_at: null,
+    begun_at: at,
+    created_at: at,
+    ...rest,
+  })
+}
+
+export function addPeople({ cast, entryId, random }: Subject, { rows }: Place, at: Date): void {
+  for (const person of cast.people) {
+    rows.add('entry_people', {
+      uid: uidAt(at, random),
+      entry_id: entryId,
+      part: person.part,
+      user_id: person.userId,
+      name: person.name,
+      name_key: nameKey(person.name),
+      address: person.address,
+      address_key: addressKey(person.address),
+      email: person.email,
+      born_on: person.bornOn,
+      died_on: person.diedOn,
+      is_minor: person.minor ? 1 : 0,
+      created_at: sqlTime(at),
+    })
+  }
+}
+
+/** The record and the tokens under which it is found. */
+export function addRecord(
+  { plan, cast, ...subject }: Subject, { rows, ids }: Place, standing: Pick<ScoredSheet, 'net16' | 'gross16'> & Partial<ScoredSheet>,
+  acceptedAt: Date, sheetId: number | null, formerNo: string | null,
+): void {
+  const category = ids.category.get(plan.category)!
+  const hunterShown = shownName(cast.printedName, cast.printedAs)
+  rows.add('records', {
+    id: subject.recordId,
+    entry_id: subject.entryId,
+    animal_id: subject.animalId,
+    record_no: subject.recordNo,
+    former_no: formerNo,
+    class_id: category.id,
+    species_id: category.speciesId,
+    district_id: ids.district[plan.district],
+    method: plan.method,
+    origin: plan.origin,
+    original_origin: plan.originalOrigin,
+    sex: plan.sex,
+    net16: standing.net16,
+    gross16: standing.gross16,
+    taken_first_on: plan.taken.first,
+    taken_last_on: plan.taken.last,
+    taken_precision: plan.taken.precision,
+    taken_public: subject.monthPublic ? 'month' : 'year',
+    hunter_shown: hunterShown,
+    hunter_sort: sortName(hunterShown),
+    accepted_on: plan.acceptedOn,
+    accepted_at: sqlTime(acceptedAt),
+    source: plan.way === 'certified' ? 'certified' : 'taken_over',
+    key_figures: standing.definition && standing.measurements ? JSON.stringify(keyFigures(standing.definition, standing.measurements)) : '[]',
+    sheet_id: sheetId,
+  })
+  for (const token of recordTokens({ recordNo: subject.recordNo, formerNo, hunterShown })) {
+    rows.add('record_tokens', { token, class_id: category.id, net16: standing.net16, record_id: subject.recordId })
+  }
+}
