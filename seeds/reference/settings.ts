@@ -1,4 +1,4 @@
-import { METHODS } from './methods'
+import { METHODS } from '#shared/domain/workflow/origins'
 
 /**
  * Values every registry begins with. A registry's own name, zone and currency are for its registrar to give; what the
