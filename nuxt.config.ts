@@ -56,6 +56,8 @@ export default defineNuxtConfig({
     esbuild: { options: { target: 'node20' } },
   },
   hooks: {
+    // The sign-in module's client asks for the session on every page; we ask at `/api/me`, and only where it is needed.
+    'app:resolve': (app) => { app.plugins = app.plugins.filter(plugin => !/nuxt-auth\/dist\/runtime\/plugin(?:\.js)?$/.test(plugin.src)) },
     // Ours answers for the API and leaves pages to Nuxt's own.
     'nitro:config': (config) => { config.errorHandler = [here('./server/error.ts'), ...[config.errorHandler ?? []].flat()] },
   },
@@ -63,5 +65,6 @@ export default defineNuxtConfig({
     '/_nuxt/**': { headers: { 'cache-control': 'public, max-age=31536000, immutable' } },
   },
   typescript: { strict: true, typeCheck: false, tsConfig: { compilerOptions: { noUncheckedIndexedAccess: true } } },
-  vite: { build: { target: 'es2022' } },
+  // Nothing is written into a style sheet as data: the policy lets fonts come from our own address alone.
+  vite: { build: { target: 'es2022', assetsInlineLimit: 0 } },
 })
