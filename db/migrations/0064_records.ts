@@ -25,7 +25,7 @@ export const { up, down } = table('records', `
   accepted_at DATETIME(3) NOT NULL,
   status VARCHAR(10) ${ASCII} NOT NULL DEFAULT 'accepted',
   source VARCHAR(12) ${ASCII} NOT NULL DEFAULT 'certified',
-  key_figures JSON NOT NULL DEFAULT '{}',
+  key_figures JSON NOT NULL DEFAULT '[]',
   drawing VARCHAR(400) ${ASCII} NULL,
   sheet_id BIGINT UNSIGNED NULL,
   listed_animal_id BIGINT UNSIGNED GENERATED ALWAYS AS (IF(status IN ('accepted', 'challenged'), animal_id, NULL)) STORED,

@@ -1,7 +1,8 @@
 import { addressKey, nameKey } from '#shared/domain/fold'
-import { recordTokens, shownName, sortName } from '#shared/domain/lists'
-import { checkMeasurements, keyFigures, type Measurements, score, type Score, type SheetDefinition, STEPS_PER_INCH } from '#shared/domain/measuring/index'
+import { recordTokens } from '#shared/domain/lists'
+import { checkMeasurements, type Measurements, score, type Score, type SheetDefinition, STEPS_PER_INCH } from '#shared/domain/measuring/index'
 import { sqlTime } from '../../db/time'
+import { recordRow } from '../../server/services/records/recordRow'
 import type { Head } from './heads'
 import type { Cast } from './persons'
 import type { PlannedRecord } from './plan'
@@ -9,20 +10,24 @@ import { type Random, uidAt } from './random'
 import type { Row, Rows } from './rows'
 import type { SocietyIds } from './society-data'
 
-/** A sheet with its score in the steps of its definition, and its figures in sixteenths of an inch. */
-export interface ScoredSheet {
-  readonly definition: SheetDefinition
-  readonly measurements: Measurements
-  readonly score: Score
+/** What the lists use of a head, in sixteenths of an inch, and the sheet where there is one. */
+export interface Figures {
   readonly net16: number
   readonly gross16: number
+  readonly sheet: { readonly definition: SheetDefinition, readonly measurements: Measurements } | null
+}
+
+/** A sheet with its score in the steps of its definition, and its figures in sixteenths of an inch. */
+export interface ScoredSheet extends Figures {
+  readonly sheet: { readonly definition: SheetDefinition, readonly measurements: Measurements }
+  readonly score: Score
 }
 
 export function scoredSheet(definition: SheetDefinition, head: Head): ScoredSheet {
   const measurements = checkMeasurements(definition, head)
   const result = score(definition, measurements)
   const in16 = 16 / STEPS_PER_INCH[definition.step]
-  return { definition, measurements, score: result, net16: result.net * in16, gross16: result.grossAll * in16 }
+  return { sheet: { definition, measurements }, score: result, net16: result.net * in16, gross16: result.grossAll * in16 }
 }
 
 /** One planned record with its numbers and its people. */
@@ -109,21 +114,15 @@ export function addPeople({ cast, entryId, random }: Subject, { rows }: Place, a
 }
 
 /** The record and the tokens under which it is found. */
-export function addRecord(
-  { plan, cast, ...subject }: Subject, { rows, ids }: Place, standing: Pick<ScoredSheet, 'net16' | 'gross16'> & Partial<ScoredSheet>,
-  acceptedAt: Date, sheetId: number | null, formerNo: string | null,
-): void {
-  const category = ids.category.get(plan.category)!
-  const hunterShown = shownName(cast.printedName, cast.printedAs)
-  rows.add('records', {
-    id: subject.recordId,
+export function addRecord(subject: Subject, place: Place, standing: Figures, acceptedAt: Date, sheetId: number | null, formerNo: string | null): void {
+  const { plan, cast } = subject
+  const category = place.ids.category.get(plan.category)!
+  const row = recordRow({
     entry_id: subject.entryId,
     animal_id: subject.animalId,
-    record_no: subject.recordNo,
-    former_no: formerNo,
     class_id: category.id,
     species_id: category.speciesId,
-    district_id: ids.district[plan.district],
+    district_id: place.ids.district[plan.district],
     method: plan.method,
     origin: plan.origin,
     original_origin: plan.originalOrigin,
@@ -133,16 +132,18 @@ export function addRecord(
     taken_first_on: plan.taken.first,
     taken_last_on: plan.taken.last,
     taken_precision: plan.taken.precision,
-    taken_public: subject.monthPublic ? 'month' : 'year',
-    hunter_shown: hunterShown,
-    hunter_sort: sortName(hunterShown),
-    accepted_on: plan.acceptedOn,
-    accepted_at: sqlTime(acceptedAt),
     source: plan.way === 'certified' ? 'certified' : 'taken_over',
-    key_figures: standing.definition && standing.measurements ? JSON.stringify(keyFigures(standing.definition, standing.measurements)) : '[]',
-    sheet_id: sheetId,
+    recordNo: subject.recordNo,
+    formerNo,
+    monthPublic: subject.monthPublic,
+    printedName: cast.printedName,
+    printedAs: cast.printedAs,
+    acceptedOn: plan.acceptedOn,
+    acceptedAt,
+    sheet: sheetId === null || !standing.sheet ? null : { id: sheetId, ...standing.sheet },
   })
-  for (const token of recordTokens({ recordNo: subject.recordNo, formerNo, hunterShown })) {
-    rows.add('record_tokens', { token, class_id: category.id, net16: standing.net16, record_id: subject.recordId })
+  place.rows.add('records', { id: subject.recordId, ...row } as Row<'records'>)
+  for (const token of recordTokens({ recordNo: subject.recordNo, formerNo, hunterShown: row.hunter_shown! as string })) {
+    place.rows.add('record_tokens', { token, class_id: category.id, net16: standing.net16, record_id: subject.recordId })
   }
 }
