@@ -1,0 +1,42 @@
+import { databaseConfig } from '../db/config'
+import { connect } from '../db/connection'
+import { latest, migrateUp, schemaVersion } from '../db/migrate'
+import { seedReference } from '../seeds/reference'
+import { systemClock } from '../server/clock'
+import { ConfigError, type HartrollConfig } from '../server/config'
+
+/** @returns exit code */
+type Command = (config: HartrollConfig, args: readonly string[]) => Promise<number>
+
+const say = (line: string) => process.stdout.write(`  ${line}\n`)
+
+/** Checks the environment and nothing else: reading it was the check. */
+const config: Command = async () => 0
+
+/** Brings the database to this program's schema and reference data; `--demo` fills an empty one of our own. */
+const prepare: Command = async (config, args) => {
+  const db = connect(databaseConfig(config.databaseUrl, { statementTimeout: 0 }))
+  try {
+    const before = await schemaVersion(db)
+    if (before !== null && before > latest) {
+      throw new ConfigError(`The database was made by a newer Hartroll (${before}); this one knows ${latest}. Take the newer program.`)
+    }
+    if (before !== latest) {
+      say(before === null ? 'Making the tables …' : 'Bringing the tables up to date …')
+      const names = await migrateUp(db)
+      say(`Tables: ${names.length} changes made`)
+    }
+    await seedReference(db, systemClock.now())
+  }
+  finally {
+    await db.destroy()
+  }
+  if (args.includes('--demo')) {
+    if (!config.ownDatabase) throw new ConfigError('Demo data is never put into a database that Hartroll did not make.')
+    const { fillWithDemo } = await import('./demo')
+    await fillWithDemo(config, say)
+  }
+  return 0
+}
+
+export const commands: Readonly<Record<string, Command>> = { config, prepare }
