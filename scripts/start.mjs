@@ -28,6 +28,8 @@ const begun = Date.now()
 /** @type {(() => Promise<void>)[]} what to stop, the last started first */
 const stops = []
 let stopping = false
+/** @type {Record<string, number>} process ids of what this start runs */
+const running = {}
 
 for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
   process.on(signal, () => {
@@ -120,9 +122,6 @@ async function takeDataFolder(folder) {
   noteRunning(folder, {})
   stops.push(async () => rmSync(file, { force: true }))
 }
-
-/** @type {Record<string, number>} */
-const running = {}
 
 /** @param {string} folder @param {Record<string, number>} parts */
 function noteRunning(folder, parts) {

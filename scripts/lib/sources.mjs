@@ -6,7 +6,8 @@ import path from 'node:path'
 const BUILT_FROM = [
   'app.vue', 'error.vue', 'nuxt.config.ts', 'tailwind.config.ts', 'tsconfig.json', 'package.json', 'package-lock.json',
   'assets', 'components', 'composables', 'i18n', 'layouts', 'middleware', 'pages', 'plugins', 'public', 'stores', 'utils',
-  'db', 'modules', 'patches', 'seeds', 'server', 'shared', 'scripts',
+  'db', 'modules', 'patches', 'seeds', 'server', 'shared', 'scripts/build.mjs',
+  'scripts/cli.ts', 'scripts/commands.ts', 'scripts/demo.ts',
 ]
 
 /**
