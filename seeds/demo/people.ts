@@ -10,6 +10,7 @@ import type { SocietyIds } from './society-data'
 
 export interface DemoPerson {
   readonly userId: number
+  readonly uid: string
   readonly name: string
   readonly address: string
   readonly email: string
@@ -64,6 +65,7 @@ export class People {
     const local = mail ?? this.freeLocalPart(name)
     const person: DemoPerson = {
       userId: this.next++,
+      uid: uidAt(createdAt, this.random),
       name,
       address: address(this.random, DISTRICTS.find(one => one.code === district)!.name),
       email: mail ? `${mail}@${MAIL_DOMAIN}` : `${local}@people.${MAIL_DOMAIN}`,
@@ -85,11 +87,11 @@ export class People {
   }
 
   /** Writes the accounts that were added since the last time, with the role that everybody has. */
-  async write(db: Knex, passwordHash: string): Promise<void> {
+  async write(db: Knex, passwordHash: string | null): Promise<void> {
     const rows = this.accounts.splice(0)
     await insertMany(db, 'users', rows.map(({ id, person, createdAt, shop }) => ({
       id,
-      uid: uidAt(createdAt, this.random),
+      uid: person.uid,
       email: person.email,
       email_verified_at: sqlTime(createdAt),
       password_hash: person.email.endsWith(`@${MAIL_DOMAIN}`) ? passwordHash : null,

@@ -113,7 +113,10 @@ function datesOf(species: string, hunted: boolean, today: Day, weights: Record<n
   const measuredOn = addDays(opened, wait)
   const submittedOn = addDays(measuredOn, random.whole(1, 45))
   const acceptedOn = sittings.find(sitting => sitting >= addDays(submittedOn, 24))
-  return acceptedOn && acceptedOn < addDays(today, -2) ? { takenOn, measuredOn, submittedOn, acceptedOn } : undefined
+  if (!acceptedOn || acceptedOn >= addDays(today, -2)) return undefined
+  // Nothing was half-way when the paper lists were closed.
+  if (acceptedOn > FIRST_DAY && measuredOn < addDays(FIRST_DAY, 60)) return undefined
+  return { takenOn, measuredOn, submittedOn, acceptedOn }
 }
 
 /** How well a date of taking is known: by the day since this program keeps it, less and less the older it is. */
@@ -163,7 +166,7 @@ function planRecord(category: DemoClass, scorer: Scorer, label: string, frame: F
   const hunted = (originalOrigin ?? origin) === 'hunted'
   let dates: Dates | undefined
   while (!dates) dates = datesOf(species, hunted, frame.today, frame.weights, frame.sittings, random)
-  const certified = dates.submittedOn >= FIRST_DAY
+  const certified = dates.acceptedOn > FIRST_DAY
   const taken = asKnown(dates.takenOn, certified, origin, random)
   const year = Number(dates.takenOn.slice(0, 4))
 

@@ -1,8 +1,11 @@
+import type { Json } from '#shared/domain/canonical'
+import type { Day } from '#shared/domain/dates'
 import { addressKey, nameKey } from '#shared/domain/fold'
 import { recordTokens } from '#shared/domain/lists'
 import { checkMeasurements, type Measurements, score, type Score, type SheetDefinition, STEPS_PER_INCH } from '#shared/domain/measuring/index'
 import { sqlTime } from '../../db/time'
 import { recordRow } from '../../server/services/records/recordRow'
+import { sheetHash } from '../../server/services/sheets/sheetHash'
 import type { Head } from './heads'
 import type { Cast } from './persons'
 import type { PlannedRecord } from './plan'
@@ -35,6 +38,7 @@ export interface Subject {
   readonly plan: PlannedRecord
   readonly animalId: number
   readonly entryId: number
+  readonly entryUid: string
   readonly recordId: number
   readonly recordNo: number
   readonly cast: Cast
@@ -59,7 +63,7 @@ export function addEntry(subject: Subject, place: Place, begunAt: Date, rest: Ro
   rows.add('animals', { id: subject.animalId, uid: uidAt(begunAt, random), species_id: category.speciesId, created_at: at })
   rows.add('entries', {
     id: subject.entryId,
-    uid: uidAt(begunAt, random),
+    uid: subject.entryUid,
     animal_id: subject.animalId,
     class_id: category.id,
     origin: plan.origin,
@@ -146,4 +150,50 @@ export function addRecord(subject: Subject, place: Place, standing: Figures, acc
   for (const token of recordTokens({ recordNo: subject.recordNo, formerNo, hunterShown: row.hunter_shown! as string })) {
     place.rows.add('record_tokens', { token, class_id: category.id, net16: standing.net16, record_id: subject.recordId })
   }
+}
+
+/** A signed sheet of an entry. */
+export function addSheet(subject: Subject, { rows }: Place, sheet: ScoredSheet, signed: {
+  readonly id: number
+  readonly kind: 'entry' | 'panel_a' | 'panel_b' | 'panel_joint'
+  readonly measuredOn: Day
+  readonly driedSince: Day | null
+  readonly signedAt: Date
+  readonly measurer: { readonly userId: number, readonly uid: string } | { readonly name: string }
+}): void {
+  const { definition, measurements } = sheet.sheet
+  const { measurer } = signed
+  rows.add('sheets', {
+    id: signed.id,
+    uid: uidAt(signed.signedAt, subject.random),
+    entry_id: subject.entryId,
+    kind: signed.kind,
+    number: 1,
+    definition: definition.id,
+    measurements: JSON.stringify(measurements),
+    gross: sheet.score.gross,
+    gross_all: sheet.score.grossAll,
+    net: sheet.score.net,
+    net16: sheet.net16,
+    gross16: sheet.gross16,
+    measured_on: signed.measuredOn,
+    measurer_user_id: 'userId' in measurer ? measurer.userId : null,
+    measurer_name: 'name' in measurer ? measurer.name : null,
+    dried_since: signed.driedSince,
+    state: 'signed',
+    signed_at: sqlTime(signed.signedAt),
+    hash: sheetHash({
+      entry: subject.entryUid,
+      kind: signed.kind,
+      number: 1,
+      definition: definition.id,
+      measurements: measurements as unknown as Json,
+      measuredOn: signed.measuredOn,
+      driedSince: signed.driedSince,
+      measurer: 'userId' in measurer ? measurer.uid : measurer.name,
+      signedAt: signed.signedAt.toISOString(),
+      slipAnswers: {},
+    }),
+    created_at: sqlTime(signed.signedAt),
+  })
 }
