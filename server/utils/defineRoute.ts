@@ -67,7 +67,8 @@ function check<S extends ZodType>(schema: S, value: unknown): output<S> {
 export function assertAccess(access: RouteAccess, actor: Actor): void {
   if (access === 'public') return
   if (!actor) throw new DomainError('sign_in_required')
-  if (typeof access === 'object' && 'roles' in access && !hasAnyRole(actor, access.roles)) throw new DomainError('forbidden')
+  if (typeof access !== 'object' || !('roles' in access) || hasAnyRole(actor, access.roles)) return
+  throw new DomainError(access.roles.some(role => actor.withheld?.some(one => one === role)) ? 'second_factor_setup_required' : 'forbidden')
 }
 
 /**

@@ -19,6 +19,8 @@ export interface ActiveActor {
   readonly sessionId: number
   /** whether this session has passed the second factor */
   readonly secondFactor: boolean
+  /** roles that are held but do not count in this session, since they ask for a second factor that it has not passed */
+  readonly withheld?: readonly StaffRole[]
 }
 
 /** Who asks: a signed-in person, or `null` for a visitor. */
