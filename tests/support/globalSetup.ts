@@ -1,4 +1,5 @@
 import type { TestProject } from 'vitest/node'
+import { ensureBuild } from '../../scripts/build.mjs'
 import { startTestServer, type TestServer } from './testServer'
 
 declare module 'vitest' {
@@ -14,8 +15,12 @@ interface Shared {
 }
 const shared = Symbol.for('hartroll.tests.mariadb')
 
+/** Projects whose tests talk to the built program. */
+const BUILT = new Set(['api', 'browser'])
+
 /** Starts MariaDB once for all projects of a run; Vitest does not tear down after a failed set-up, so this does. */
 export default async function setup(project: TestProject): Promise<() => Promise<void>> {
+  if (BUILT.has(project.name)) await ensureBuild()
   const holder = globalThis as Shared
   const state = holder[shared] ??= { server: startTestServer(), users: 0 }
   state.users++
