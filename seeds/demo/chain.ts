@@ -1,9 +1,10 @@
 import type { Knex } from 'knex'
 import type { State } from '#shared/domain/workflow/states'
-import { chainEvent, type ChainEnd } from '../../server/services/entries/eventChain'
+import { sqlTime } from '../../db/time'
+import { type ChainedEvent, commitmentTo, eventHash } from '../../server/services/events/hash'
 import { nextId } from '../bulk'
 import type { Random } from './random'
-import type { Row, Rows } from './rows'
+import type { Rows } from './rows'
 
 /** Something that happened to an entry. */
 export interface DemoEvent {
@@ -25,16 +26,39 @@ export class Chains {
   }
 
   add(rows: Rows, entry: { readonly id: number, readonly uid: string }, events: readonly DemoEvent[]): void {
-    let end: ChainEnd | null = null
-    for (const { from, to, by, args, texts, ...event } of events) {
-      const chained = chainEvent(
-        { ...event, entryId: entry.id, entryUid: entry.uid, fromState: from, toState: to, actor: by, args: args ?? {}, texts: texts ?? {} },
-        end, () => this.random.bytes(16),
-      )
-      end = chained.end
+    let prev: string | null = null
+    for (const [place, event] of events.entries()) {
+      const texts = Object.entries(event.texts ?? {}).map(([field, body]) => ({ field, salt: Buffer.from(this.random.bytes(16)).toString('hex'), body }))
+      const chained: ChainedEvent = {
+        entry: entry.uid,
+        seq: place + 1,
+        at: event.at.toISOString(),
+        kind: event.kind,
+        from: event.from,
+        to: event.to,
+        actor: event.by?.uid ?? null,
+        args: event.args ?? {},
+        commitments: Object.fromEntries(texts.map(({ field, salt, body }) => [field, commitmentTo(salt, body)])),
+        prev,
+      }
+      const hash = eventHash(chained)
       const id = this.next++
-      rows.add('entry_events', { id, ...chained.row } as Row<'entry_events'>)
-      for (const text of chained.texts) rows.add('event_texts', { event_id: id, ...text } as Row<'event_texts'>)
+      rows.add('entry_events', {
+        id,
+        entry_id: entry.id,
+        seq: chained.seq,
+        at: sqlTime(event.at),
+        kind: event.kind,
+        from_state: event.from,
+        to_state: event.to,
+        actor_user_id: event.by?.userId ?? null,
+        args: JSON.stringify(chained.args),
+        commitments: JSON.stringify(chained.commitments),
+        prev_hash: prev,
+        hash,
+      })
+      for (const text of texts) rows.add('event_texts', { event_id: id, ...text })
+      prev = hash
     }
   }
 }

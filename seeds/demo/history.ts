@@ -1,5 +1,6 @@
 import type { Knex } from 'knex'
 import { addDays, type Day } from '#shared/domain/dates'
+import { checksFor } from '#shared/domain/workflow/checks'
 import { isSecondMeasuringDue } from '#shared/domain/workflow/remeasuring'
 import { DEFAULT_LIMITS } from '#shared/domain/workflow/limits'
 import { nextId } from '../bulk'
@@ -9,7 +10,7 @@ import { type DemoPerson, formerMeasurers, measurerFor, type People, type Staff 
 import { castFor, ownerFor } from './persons'
 import { type PlannedRecord, type Scorer, scorerFor } from './plan'
 import { type Random, uidAt } from './random'
-import { type Place, scoredSheet, type Subject } from './record-rows'
+import { isOnTheLine, type Place, scoredSheet, type Subject } from './record-rows'
 import { Rows } from './rows'
 import type { PastSitting } from './sittings'
 import { minimum16, type SocietyIds } from './society-data'
@@ -28,7 +29,6 @@ export interface HistoryFrame {
   readonly sittings: ReadonlyMap<Day, PastSitting>
   readonly workflowVersion: number
   readonly statement: WholeWay['statement']
-  readonly checks: readonly string[]
   readonly random: Random
   readonly progress: (done: number, total: number) => void
 }
@@ -156,7 +156,7 @@ class HistoryWriter {
       panel,
       termId: term.id,
       statement: frame.statement,
-      checks: frame.checks,
+      checks: checksFor(plan.origin, isOnTheLine(plan)),
     }, this.place, this.chains, this.numbers)
   }
 

@@ -1,5 +1,5 @@
-import { hash } from '@node-rs/argon2'
 import type { Knex } from 'knex'
+import { hashPassword } from '../../server/services/people/passwords'
 import { STATEMENT_TEXTS } from '../reference/statement-texts'
 import { DEMO_PASSWORD } from './accounts'
 import { writeHistory } from './history'
@@ -40,7 +40,7 @@ export async function seedDemo(db: Knex, { now, scale = 1, progress = () => {} }
   const ids = await seedSociety(db)
   const people = new People(random.fork('people'), ids)
   await people.begin(db)
-  const password = await hash(DEMO_PASSWORD, { memoryCost: 19_456, timeCost: 2, parallelism: 1 })
+  const password = await hashPassword(DEMO_PASSWORD)
   const staff = await seedStaff(db, people, ids, password, today, random.fork('staff'))
   const sittings = await seedPastSittings(db, staff, today, random.fork('sittings'))
   const { id: workflowVersion } = (await db('workflow_versions').orderBy('number', 'desc').first('id'))!
@@ -52,7 +52,7 @@ export async function seedDemo(db: Knex, { now, scale = 1, progress = () => {} }
   plans.sort((a, b) => (a.plan.acceptedOn === b.plan.acceptedOn ? a.turn - b.turn : a.plan.acceptedOn < b.plan.acceptedOn ? -1 : 1))
 
   await writeHistory(plans.map(({ plan }) => plan), {
-    db, ids, staff, people, sittings, workflowVersion, statement: STATEMENT_TEXTS[0], checks: [], random: random.fork('history'),
+    db, ids, staff, people, sittings, workflowVersion, statement: STATEMENT_TEXTS[0], random: random.fork('history'),
     progress: (done, total) => progress(`Writing records: ${done} of ${total}`),
   })
   await countLists(db)

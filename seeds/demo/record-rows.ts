@@ -11,6 +11,7 @@ import type { Cast } from './persons'
 import type { PlannedRecord } from './plan'
 import { type Random, uidAt } from './random'
 import type { Row, Rows } from './rows'
+import { ON_THE_LINE } from './society'
 import type { SocietyIds } from './society-data'
 
 /** What the lists use of a head, in sixteenths of an inch, and the sheet where there is one. */
@@ -53,13 +54,16 @@ export interface Place {
   readonly workflowVersion: number
 }
 
+/** Whether the animal comes from a district that a class line cuts. */
+export const isOnTheLine = (plan: Pick<PlannedRecord, 'category' | 'district'>) =>
+  plan.category.startsWith(ON_THE_LINE.species) && ON_THE_LINE.districts.includes(plan.district)
+
 /** The animal and its entry, as a draft: what makes it more needs a sheet, and a sheet needs the entry. */
 export function addEntry(subject: Subject, place: Place, begunAt: Date, rest: Row<'entries'> = {}): void {
   const { plan, cast, random } = subject
   const { rows, ids } = place
   const at = sqlTime(begunAt)
   const category = ids.category.get(plan.category)!
-  const onTheLine = category.species === 'whitetail' && ['otterstone', 'thornwether'].includes(plan.district)
   rows.add('animals', { id: subject.animalId, uid: uidAt(begunAt, random), species_id: category.speciesId, created_at: at })
   rows.add('entries', {
     id: subject.entryId,
@@ -77,7 +81,7 @@ export function addEntry(subject: Subject, place: Place, begunAt: Date, rest: Ro
     measurer_user_id: null,
     reviewer_user_id: null,
     district_id: ids.district[plan.district],
-    district_side: onTheLine ? 'east' : null,
+    district_side: isOnTheLine(plan) ? ON_THE_LINE.side : null,
     taken_first_on: plan.taken.first,
     taken_last_on: plan.taken.last,
     taken_precision: plan.taken.precision,
