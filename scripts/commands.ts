@@ -4,6 +4,7 @@ import { latest, migrateUp, schemaVersion } from '../db/migrate'
 import { seedReference } from '../seeds/reference'
 import { systemClock } from '../server/clock'
 import { ConfigError, type HartrollConfig } from '../server/config'
+import { checkRegistry } from '../server/services/integrity/check'
 
 /** @returns exit code */
 type Command = (config: HartrollConfig, args: readonly string[]) => Promise<number>
@@ -39,4 +40,21 @@ const prepare: Command = async (config, args) => {
   return 0
 }
 
-export const commands: Readonly<Record<string, Command>> = { config, prepare }
+/** Says every thing in the database that does not agree, a line each; exit code 1 when there is one. */
+const check: Command = async (config) => {
+  const db = connect(databaseConfig(config.databaseUrl, { statementTimeout: 0, poolMax: 1 }))
+  try {
+    let findings = 0
+    for await (const { code, where, detail } of checkRegistry(db, null, what => say(`Checking ${what} …`))) {
+      findings++
+      say(`${code} ${where}${detail ? `: ${detail}` : ''}`)
+    }
+    say(findings === 0 ? 'Everything agrees' : `${findings} findings`)
+    return findings === 0 ? 0 : 1
+  }
+  finally {
+    await db.destroy()
+  }
+}
+
+export const commands: Readonly<Record<string, Command>> = { config, prepare, check }
