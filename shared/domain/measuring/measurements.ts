@@ -1,3 +1,5 @@
+import type { Json } from '../canonical'
+import { canonicalText } from '../canonical'
 import type { Line, ListLine, ListPoint, Measurements, Reading, SheetDefinition } from './sheet'
 import { hasSides, isCount, isList } from './sheet'
 import type { Argument, Parsed, Side, UnitRefusal } from './units'
@@ -251,18 +253,16 @@ function writePoint(definition: SheetDefinition, point: ListPoint): { side: Side
 }
 
 /**
- * The one text that stands for a sheet, to be signed or hashed: JSON with sorted keys and integers only, which is the
- * canonical form of RFC 8785 for such data. Equal sheets have equal texts however they were written or stored.
+ * The one text that stands for a sheet's readings, in the canonical form of RFC 8785. Equal sheets have equal texts
+ * however they were written or stored.
  */
 export function canonicalSheet(definition: SheetDefinition, measurements: Measurements): string {
-  const sorted = (record: Readonly<Record<string, unknown>>) =>
-    Object.fromEntries(Object.keys(record).sort().map((key) => [key, record[key]]))
-  const lists = Object.fromEntries(Object.entries(measurements.lists).map(([id, points]) => [id, points.map((point) => sorted({ ...point }))]))
-  return JSON.stringify({
-    definition: definition.id,
-    left: sorted(measurements.left),
-    lists: sorted(lists),
-    right: sorted(measurements.right),
-    single: sorted(measurements.single),
-  })
+  return canonicalText({ definition: definition.id, ...plain(measurements) })
 }
+
+const plain = ({ single, right, left, lists }: Measurements): { readonly [part: string]: Json } => ({
+  single,
+  right,
+  left,
+  lists: Object.fromEntries(Object.entries(lists).map(([id, points]) => [id, points.map((point) => ({ ...point }))])),
+})

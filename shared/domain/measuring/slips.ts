@@ -1,6 +1,6 @@
 import type { ListLine, Line, Measurements, PairedLine, Reading, Severity, SheetDefinition, SlipCode, SlipRule } from './sheet'
 import { hasSides, isCount, isList } from './sheet'
-import { daysBetween } from './days'
+import { daysBetween } from '../dates'
 import { inSum, isPoint, score } from './score'
 import type { Argument, Side, Step } from './units'
 import { SIDES, STEPS_PER_INCH } from './units'
