@@ -8,9 +8,11 @@ export interface Me {
   readonly email: string
   readonly roles: readonly Role[]
   readonly secondFactor: boolean
+  /** The society whose registry this is. */
+  readonly registry: { readonly name: string, readonly timeZone: string, readonly currency: string }
 }
 
-const NOBODY: Me = { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false }
+const NOBODY: Me = { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false, registry: { name: '', timeZone: 'UTC', currency: 'USD' } }
 
 export function useMe() {
   const me = useState<Me | null>('me', () => null)
