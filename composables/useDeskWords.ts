@@ -6,8 +6,8 @@ export function useDeskWords() {
   const { me } = useMe()
   const zone = () => me.value?.registry.timeZone ?? 'UTC'
 
-  const category = (id: string) => te(`sheet.categories.${id}`) ? t(`sheet.categories.${id}`) : id
-  const species = (id: string) => te(`sheet.species.${id}`) ? t(`sheet.species.${id}`) : id
+  const category = (id: string) => te(`animals.classes.${id}`) ? t(`animals.classes.${id}`) : id
+  const species = (id: string) => te(`animals.species.${id}`) ? t(`animals.species.${id}`) : id
   const days = (count: number) => t('desk.days', { count }, count)
   const left = (count: number) => count < 0 ? t('desk.overdue', { count: -count }, -count) : t('common.daysLeft', { count }, count)
 
