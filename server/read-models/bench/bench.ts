@@ -46,7 +46,7 @@ export async function accreditationsOf(db: Knex, userId: number) {
     .select('a.id', 'a.number', 'a.valid_to', 'a.suspended_at', 'p.code')
   const byId = new Map<number, { number: string, validTo: string, suspendedAt: string | null, species: string[] }>()
   for (const row of rows) {
-    const one = byId.get(row.id) ?? { number: row.number, validTo: row.valid_to, suspendedAt: isoTimeOrNull(row.suspended_at), species: [] }
+    const one = byId.get(row.id) ?? { number: row.number, validTo: row.valid_to, suspendedAt: isoTimeOrNull(row.suspended_at), species: [] as string[] }
     if (row.code) one.species.push(row.code)
     byId.set(row.id, one)
   }

@@ -2,6 +2,9 @@ import type { Knex } from 'knex'
 import { isoTime } from '../../../db/time'
 import { foldedWords } from '../../../shared/domain/fold'
 import { OFFICE_STATES, type QueueQuestion } from '../../../shared/domain/desk'
+import type { Step } from '../../../shared/domain/measuring/units'
+import type { Origin } from '../../../shared/domain/workflow/origins'
+import type { State } from '../../../shared/domain/workflow/states'
 import { NAMED_AFTER } from '../desk/rows'
 
 /** Where a page of the queue goes on: the sort's value and the entry's id of the last line. */
@@ -29,6 +32,26 @@ function chosen(db: Knex, query: QueueQuestion, userId: number): Knex.QueryBuild
   return q
 }
 
+interface QueueRow {
+  readonly id: number
+  readonly uid: string
+  readonly state: State
+  readonly state_since: string
+  readonly due_on: string | null
+  readonly net16: number | null
+  readonly origin: Origin
+  readonly hold_at: string | null
+  readonly appealed_at: string | null
+  readonly reviewer_user_id: number | null
+  readonly category: string
+  readonly step: Step
+  readonly district: string | null
+  readonly reviewer_name: string
+  readonly person: string | null
+  readonly open_requests: number
+  readonly ticked: number
+}
+
 /** One page of the office's queue, one line more than asked for when there is a next page. */
 export async function queuePage(db: Knex, query: QueueQuestion, userId: number, after: QueuePlace | null) {
   const column = query.sort.endsWith('age') ? 'e.state_since' : 'e.net16'
@@ -38,7 +61,7 @@ export async function queuePage(db: Knex, query: QueueQuestion, userId: number, 
     const beyond = descending ? '<' : '>'
     q.where(p => p.where(column, beyond, after.value).orWhere(r => r.where(column, after.value).where('e.id', '>', after.id)))
   }
-  const rows = await q.leftJoin('users as u', 'u.id', 'e.reviewer_user_id')
+  const rows: QueueRow[] = await q.leftJoin('users as u', 'u.id', 'e.reviewer_user_id')
     .orderBy([{ column, order: descending ? 'desc' : 'asc' }, { column: 'e.id', order: 'asc' }]).limit(query.limit + 1)
     .select('e.id', 'e.uid', 'e.state', 'e.state_since', 'e.due_on', 'e.net16', 'e.origin', 'e.hold_at', 'e.appealed_at', 'e.reviewer_user_id',
       'c.code as category', 'c.step', 'd.name as district', 'u.name as reviewer_name',

@@ -1,6 +1,6 @@
 import type { ActiveActor } from '../../../shared/domain/access/roles'
 import { daysBetween } from '../../../shared/domain/dates'
-import { WHOSE_TURN, type State } from '../../../shared/domain/workflow/states'
+import { WHOSE_TURN } from '../../../shared/domain/workflow/states'
 import { DomainError } from '../../../shared/errors'
 import type { OfficeQueue, OfficeQueueQuery } from '#shared/schemas/office'
 import { dayIn } from '../../clock'
@@ -36,8 +36,8 @@ export async function readQueue(registry: Registry, actor: ActiveActor, query: O
   return {
     items: page.map(row => ({
       id: row.uid,
-      state: row.state as State,
-      turn: WHOSE_TURN[row.state as State],
+      state: row.state,
+      turn: WHOSE_TURN[row.state],
       category: row.category,
       district: row.district,
       origin: row.origin,
