@@ -156,6 +156,9 @@ export function addRecord(subject: Subject, place: Place, standing: Figures, acc
   }
 }
 
+/** What a measurer says beside the readings: the skull plate is whole, and there was no slip to explain. */
+export const SLIP_ANSWERS = { wholeSkull: true, reasons: {} } as const
+
 /** A signed sheet of an entry. */
 export function addSheet(subject: Subject, { rows }: Place, sheet: ScoredSheet, signed: {
   readonly id: number
@@ -196,8 +199,9 @@ export function addSheet(subject: Subject, { rows }: Place, sheet: ScoredSheet, 
       driedSince: signed.driedSince,
       measurer: 'userId' in measurer ? measurer.uid : measurer.name,
       signedAt: signed.signedAt.toISOString(),
-      slipAnswers: {},
+      slipAnswers: SLIP_ANSWERS,
     }),
+    slip_answers: JSON.stringify(SLIP_ANSWERS),
     created_at: sqlTime(signed.signedAt),
   })
 }
