@@ -15,7 +15,8 @@ export interface Problem {
   readonly [extension: string]: unknown
 }
 
-function localeOfRequest(event: H3Event): string {
+/** The language that the caller asks for first. */
+export function localeOfRequest(event: H3Event): string {
   return (getRequestHeader(event, 'accept-language') ?? 'en').slice(0, 2).toLowerCase()
 }
 

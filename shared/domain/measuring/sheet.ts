@@ -182,6 +182,6 @@ export function isList(line: Line): line is ListLine {
 }
 
 /** Whether a line's readings are whole points and not lengths. */
-export function isCount(line: Line): boolean {
+export function isCount(line: Pick<Line, 'nature'>): boolean {
   return line.nature === 'count'
 }
