@@ -9,27 +9,41 @@ const MOST_VALUES = 20_000
 type Value = string | number | boolean | null | undefined
 type RowOf<T extends keyof Tables> = Partial<Record<keyof Tables[T]['base'], Value>>
 
+/** Rows by the columns they give, so that each statement gives one set of columns. */
+function byShape<Row extends object>(rows: readonly Row[]): Row[][] {
+  const shapes = new Map<string, Row[]>()
+  for (const row of rows) {
+    const shape = Object.keys(row).join()
+    const some = shapes.get(shape)
+    if (some) some.push(row)
+    else shapes.set(shape, [row])
+  }
+  return [...shapes.values()]
+}
+
 /**
- * Puts many rows of one shape into a table: statements of many rows, no transaction over five thousand. The columns are
- * those of the first row. Returns how many there were.
+ * Puts many rows into a table: statements of many rows, no transaction over five thousand. Rows that give other columns
+ * go in statements of their own. Returns how many there were.
  */
 export async function insertMany<T extends keyof Tables & string>(db: Knex, table: T, rows: readonly RowOf<T>[]): Promise<number> {
-  if (rows.length === 0) return 0
+  for (let from = 0; from < rows.length; from += MOST_ROWS) {
+    await db.transaction(async (trx) => {
+      for (const some of byShape(rows.slice(from, from + MOST_ROWS))) await insertAlike(trx, table, some)
+    })
+  }
+  return rows.length
+}
+
+async function insertAlike<T extends keyof Tables & string>(trx: Knex, table: T, rows: readonly RowOf<T>[]): Promise<void> {
   const columns = Object.keys(rows[0]!) as (keyof RowOf<T> & string)[]
   const perStatement = Math.max(1, Math.floor(MOST_VALUES / columns.length))
   const tuple = `(${columns.map(() => '?').join(',')})`
   const names = columns.map(column => `\`${column}\``).join(',')
-  for (let from = 0; from < rows.length; from += MOST_ROWS) {
-    await db.transaction(async (trx) => {
-      const part = rows.slice(from, from + MOST_ROWS)
-      for (let at = 0; at < part.length; at += perStatement) {
-        const some = part.slice(at, at + perStatement)
-        const values = some.flatMap(row => columns.map(column => row[column] ?? null))
-        await trx.raw(`INSERT INTO \`${table}\` (${names}) VALUES ${some.map(() => tuple).join(',')}`, values as Knex.RawBinding[])
-      }
-    })
+  for (let at = 0; at < rows.length; at += perStatement) {
+    const some = rows.slice(at, at + perStatement)
+    const values = some.flatMap(row => columns.map(column => row[column] ?? null))
+    await trx.raw(`INSERT INTO \`${table}\` (${names}) VALUES ${some.map(() => tuple).join(',')}`, values as Knex.RawBinding[])
   }
-  return rows.length
 }
 
 /** The id that the next row of a table would get, for rows whose ids are given out beforehand. */

@@ -25,13 +25,14 @@ export class Chains {
     return new Chains(await nextId(db, 'entry_events'), random)
   }
 
-  add(rows: Rows, entry: { readonly id: number, readonly uid: string }, events: readonly DemoEvent[]): void {
-    let prev: string | null = null
+  /** @param end the last event of the entry so far; null for one that has none */
+  add(rows: Rows, entry: { readonly id: number, readonly uid: string }, events: readonly DemoEvent[], end: { readonly seq: number, readonly hash: string } | null = null): void {
+    let prev = end?.hash ?? null
     for (const [place, event] of events.entries()) {
       const texts = Object.entries(event.texts ?? {}).map(([field, body]) => ({ field, salt: Buffer.from(this.random.bytes(16)).toString('hex'), body }))
       const chained: ChainedEvent = {
         entry: entry.uid,
-        seq: place + 1,
+        seq: (end?.seq ?? 0) + place + 1,
         at: event.at.toISOString(),
         kind: event.kind,
         from: event.from,

@@ -3,6 +3,7 @@ import { hashPassword } from '../../server/services/people/passwords'
 import { STATEMENT_TEXTS } from '../reference/statement-texts'
 import { DEMO_PASSWORD } from './accounts'
 import { writeHistory } from './history'
+import { writeOpenEntries } from './open-entries'
 import { People, seedStaff } from './people'
 import { planRecords, type PlannedRecord } from './plan'
 import { randomFor } from './random'
@@ -54,6 +55,10 @@ export async function seedDemo(db: Knex, { now, scale = 1, progress = () => {} }
   await writeHistory(plans.map(({ plan }) => plan), {
     db, ids, staff, people, sittings, workflowVersion, statement: STATEMENT_TEXTS[0], random: random.fork('history'),
     progress: (done, total) => progress(`Writing records: ${done} of ${total}`),
+  })
+  progress('Entries that are under way')
+  await writeOpenEntries({
+    db, ids, staff, people, past: sittings, workflowVersion, statement: STATEMENT_TEXTS[0], random: random.fork('open'), now, today,
   })
   await countLists(db)
   await db('settings').where({ name: 'demoSeeded' }).update({ value: 'true' })

@@ -97,6 +97,17 @@ function dayInSeason(species: string, year: number, random: Random): Day {
   return addDays(first, Math.floor(length * random.next() ** 1.4))
 }
 
+/** The last day of hunting that lies on or before a day. */
+export function latestDayInSeason(species: string, until: Day, random: Random): Day {
+  for (let year = Number(until.slice(0, 4)); ; year--) {
+    for (const [from, to] of [...SEASONS[species]!].reverse()) {
+      const [first, last] = [`${year}-${from}`, `${year}-${to}` < until ? `${year}-${to}` : until]
+      const length = Math.round((Date.parse(last) - Date.parse(first)) / 86_400_000)
+      if (length >= 0) return addDays(last, -random.whole(0, Math.min(length, 25)))
+    }
+  }
+}
+
 interface Dates {
   readonly takenOn: Day
   readonly measuredOn: Day

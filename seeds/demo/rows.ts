@@ -8,7 +8,7 @@ export type Row<T extends keyof Tables> = Partial<Record<keyof Tables[T]['base']
 /** Parents before children, so that every foreign key finds what it points at. */
 const ORDER = [
   'animals', 'entries', 'entry_people', 'sheets', 'documents', 'statements', 'checkouts', 'ledger', 'requests', 'checks',
-  'docket_items', 'ballots', 'remeasurings', 'entry_events', 'event_texts', 'records', 'record_tokens',
+  'docket_items', 'ballots', 'file_openings', 'remeasurings', 'challenges', 'entry_events', 'event_texts', 'records', 'record_tokens',
 ] as const satisfies readonly (keyof Tables)[]
 type Table = (typeof ORDER)[number]
 

@@ -13,11 +13,15 @@ async function* pages<Row extends { id: number }>(page: (after: number) => Promi
 
 const PAGE = 1_000
 
-export type CheckedSheet = Pick<SheetsRow, 'id' | 'uid' | 'definition' | 'measurements' | 'gross' | 'gross_all' | 'net' | 'net16' | 'gross16'>
+export type CheckedSheet = Pick<SheetsRow,
+  'id' | 'uid' | 'kind' | 'number' | 'state' | 'definition' | 'measurements' | 'gross' | 'gross_all' | 'net' | 'net16' | 'gross16' | 'measured_on'
+  | 'measurer_name' | 'dried_since' | 'signed_at' | 'hash' | 'slip_answers'> & { entry_uid: string | null, measurer_uid: string | null }
 
-/** Sheets that have figures. */
-export const scoredSheets = (db: Knex) => pages<CheckedSheet>(after => db('sheets').whereNotNull('net').where('id', '>', after)
-  .orderBy('id').limit(PAGE).select('id', 'uid', 'definition', 'measurements', 'gross', 'gross_all', 'net', 'net16', 'gross16'))
+/** Sheets that have figures, with what their signature stands for. */
+export const scoredSheets = (db: Knex) => pages<CheckedSheet>(after => db('sheets as s').leftJoin('entries as e', 'e.id', 's.entry_id')
+  .leftJoin('users as u', 'u.id', 's.measurer_user_id').whereNotNull('s.net').where('s.id', '>', after).orderBy('s.id').limit(PAGE)
+  .select('s.id', 's.uid', 's.kind', 's.number', 's.state', 's.definition', 's.measurements', 's.gross', 's.gross_all', 's.net', 's.net16', 's.gross16',
+    's.measured_on', 's.measurer_name', 's.dried_since', 's.signed_at', 's.hash', 's.slip_answers', 'e.uid as entry_uid', 'u.uid as measurer_uid'))
 
 export type CheckedRecord = Pick<RecordsRow, 'id' | 'record_no' | 'former_no' | 'class_id' | 'net16' | 'hunter_shown' | 'status'>
 

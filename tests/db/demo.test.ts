@@ -2,6 +2,7 @@ import { beforeAll, describe, expect, it } from 'vitest'
 import type { Knex } from 'knex'
 import { migrateUp } from '../../db/migrate'
 import { CATEGORIES, checkMeasurements, definitionById, score, slips, STEPS_PER_INCH } from '../../shared/domain/measuring'
+import { STATES } from '../../shared/domain/workflow/states'
 import { demoState, seedDemo } from '../../seeds/demo'
 import { DEMO_ACCOUNTS } from '../../seeds/demo/accounts'
 import { randomFor } from '../../seeds/demo/random'
@@ -94,6 +95,21 @@ describe('the demo', () => {
       const certifying = sheet.dried_since ? { measuredOn: sheet.measured_on!, driedSince: sheet.dried_since, wholeSkull: true } : undefined
       expect(slips(definition, measurements, certifying).filter(slip => slip.severity === 'blocking')).toEqual([])
     }
+  })
+
+  it('has at least forty entries under way, in every state of the workflow, with work for every desk', async () => {
+    const states = await db('entries').groupBy('state').select('state').count({ n: '*' }) as { state: string, n: number }[]
+    expect(states.map(row => row.state).sort()).toEqual([...STATES].sort())
+    expect(states.filter(row => row.state !== 'accepted').reduce((sum, row) => sum + row.n, 0)).toBeGreaterThanOrEqual(40)
+    const [id] = await db('users').where({ email: 'entrant@ochrebasin.example' }).pluck('id')
+    const own = await db('entries').where({ owner_user_id: id }).distinct().pluck('state')
+    expect(own).toEqual(expect.arrayContaining(['draft', 'measuring', 'certified', 'in_review', 'returned', 'at_panel', 'declined', 'lapsed']))
+    const [measurer] = await db('users').where({ email: 'measurer@ochrebasin.example' }).pluck('id')
+    expect((await db('entries').where({ measurer_user_id: measurer, state: 'measuring' })).length).toBeGreaterThan(3)
+    expect(await db('sittings').whereIn('state', ['open', 'planned']).pluck('state')).toHaveLength(2)
+    expect((await db('requests').whereNull('closed_at').whereNull('answered_at')).length).toBeGreaterThan(3)
+    expect((await db('ballots as b').join('docket_items as d', 'd.id', 'b.docket_item_id').where('d.state', 'open')).length).toBeGreaterThan(4)
+    expect(await db('challenges').distinct().pluck('state')).toHaveLength(4)
   })
 
   it('knows that it is whole, and is never put into a database with people in it', async () => {

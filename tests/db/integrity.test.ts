@@ -47,7 +47,7 @@ describe('the integrity check', () => {
   })
 
   it('finds a net that is not the score of its sheet', async () => {
-    const sheet = (await db('sheets').whereNotNull('net').first('id', 'net'))!
+    const sheet = (await db('sheets').where({ state: 'signed' }).first('id', 'net'))!
     await spoil('sheets', { id: sheet.id }, { net: sheet.net! - 1 })
     expect(await codes()).toEqual(['sheet_score'])
   })
@@ -60,8 +60,14 @@ describe('the integrity check', () => {
     expect(await codes()).toEqual(['sheet_score'])
   })
 
+  it('finds a signed sheet that no longer says what was signed', async () => {
+    const sheet = (await db('sheets').where({ state: 'signed' }).first('id'))!
+    await spoil('sheets', { id: sheet.id }, { measured_on: '2001-01-01' })
+    expect(await codes()).toEqual(['sheet_hash'])
+  })
+
   it('finds a sheet that its definition cannot read, and one whose definition nobody knows', async () => {
-    const sheet = (await db('sheets').whereNotNull('net').first('id'))!
+    const sheet = (await db('sheets').where({ state: 'signed' }).first('id'))!
     await spoil('sheets', { id: sheet.id }, { measurements: '{"single":{}}' })
     expect(await codes()).toEqual(['sheet_unreadable'])
     await mend?.()

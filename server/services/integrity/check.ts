@@ -8,10 +8,11 @@ import {
   listedWithoutRecord, paidWithoutCharge, recordNumbers, scoredSheets, tokensBetween, wrongFacetCounts, wrongListCounts, wrongRecords,
 } from '../../read-models/integrity'
 import { chainFaults, type StoredEvent } from '../events/hash'
+import { sheetHash } from '../sheets/sheetHash'
 
 /** What can be wrong with a registry's data. */
 export const FINDINGS = [
-  'sheet_unreadable', 'sheet_score', 'record_figures', 'entry_without_record', 'record_number', 'list_count', 'facet_count', 'record_tokens',
+  'sheet_unreadable', 'sheet_score', 'sheet_hash', 'record_figures', 'entry_without_record', 'record_number', 'list_count', 'facet_count', 'record_tokens',
   'event_chain', 'event_state', 'paid_without_charge', 'file_missing', 'file_size',
 ] as const
 export type FindingCode = (typeof FINDINGS)[number]
@@ -65,7 +66,7 @@ async function* checkSheets(db: Knex): AsyncGenerator<Finding> {
   const totals = new Int32Array(Object.keys(TOTALS).length)
   for await (const sheets of scoredSheets(db)) {
     for (const sheet of sheets) {
-      const finding = checkSheet(sheet, totals)
+      const finding = checkSheet(sheet, totals) ?? checkSignature(sheet)
       if (finding) yield finding
     }
   }
@@ -87,6 +88,17 @@ function checkSheet(sheet: CheckedSheet, totals: Int32Array): Finding | undefine
   const scored = [gross, grossAll, net, net * in16, grossAll * in16].join(' ')
   const kept = [sheet.gross, sheet.gross_all, sheet.net, sheet.net16, sheet.gross16].join(' ')
   return kept === scored ? undefined : { code: 'sheet_score', where: sheet.uid, detail: `kept ${kept}, scored ${scored}` }
+}
+
+/** A signed sheet says what it said when it was signed. */
+function checkSignature(sheet: CheckedSheet): Finding | undefined {
+  if (sheet.state === 'open') return undefined
+  const hash = sheetHash({
+    entry: sheet.entry_uid!, kind: sheet.kind, number: sheet.number, definition: sheet.definition, measurements: JSON.parse(sheet.measurements) as Json,
+    measuredOn: sheet.measured_on!, driedSince: sheet.dried_since, measurer: sheet.measurer_uid ?? sheet.measurer_name!,
+    signedAt: isoTime(sheet.signed_at!), slipAnswers: JSON.parse(sheet.slip_answers) as Json,
+  })
+  return hash === sheet.hash ? undefined : { code: 'sheet_hash', where: sheet.uid, detail: 'is not what was signed' }
 }
 
 async function* checkRecords(db: Knex): AsyncGenerator<Finding> {
