@@ -1099,6 +1099,7 @@ export interface SheetsRow {
   slip_answers: string
   created_at: string
   open_entry_id: number | null
+  measurements_hash: string | null
 }
 
 export interface SheetsInsert {

@@ -74,6 +74,7 @@ import * as m0071_settings from './0071_settings'
 import * as m0072_erasures from './0072_erasures'
 import * as m0073_worker_heartbeats from './0073_worker_heartbeats'
 import * as m0075_workflow_versions_limits from './0075_workflow_versions_limits'
+import * as m0076_sheets_measurements_hash from './0076_sheets_measurements_hash'
 
 export type { Migration }
 
@@ -153,4 +154,5 @@ export const MIGRATIONS: readonly (readonly [name: string, migration: Migration]
   ['0072_erasures', m0072_erasures],
   ['0073_worker_heartbeats', m0073_worker_heartbeats],
   ['0075_workflow_versions_limits', m0075_workflow_versions_limits],
+  ['0076_sheets_measurements_hash', m0076_sheets_measurements_hash],
 ]

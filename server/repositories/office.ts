@@ -76,7 +76,7 @@ export async function findLikelyDoubles(db: Knex, query: DoubleQuery): Promise<L
     .whereNot('e.animal_id', query.animalId).whereNotIn('e.state', ['withdrawn', 'draft']).limit(20)
   const sameSheet = query.measurements === null
     ? []
-    : await others().join('sheets as s', 's.id', 'e.signed_sheet_id').where('s.measurements', query.measurements).select('e.uid', 'e.state')
+    : await others().join('sheets as s', 's.id', 'e.signed_sheet_id').whereRaw('s.measurements_hash = SHA2(?, 256)', [query.measurements]).select('e.uid', 'e.state')
   const sameFacts = query.hunterKey === null || query.takenFirstOn !== query.takenLastOn
     ? []
     : await others().join('entry_people as p', 'p.entry_id', 'e.id').where({ 'p.part': 'hunter', 'p.name_key': query.hunterKey, 'e.taken_first_on': query.takenFirstOn })
