@@ -58,7 +58,7 @@ function read(definition: SheetDefinition, raw: unknown, locale: string): Measur
   })
 }
 
-function presentLine(definition: SheetDefinition, line: ScoredLine, say: Parameters<typeof lineLabel>[0]): ScoreAnswer['lines'][number] {
+export function presentLine(definition: SheetDefinition, line: ScoredLine, say: Parameters<typeof lineLabel>[0]): ScoreAnswer['lines'][number] {
   const shown = (steps: number) => formatSteps(steps, definition.step)
   const reading = (value: Reading | null) => (value === null || value === 'absent' ? value : isCount(line) ? String(value) : shown(value))
   return {

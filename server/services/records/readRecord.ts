@@ -1,0 +1,70 @@
+import { formatSteps, type Say } from '../../../shared/domain/measuring/index'
+import { DomainError } from '../../../shared/errors'
+import type { RecordAnswer } from '../../../shared/schemas/records'
+import { dayIn } from '../../clock'
+import type { Registry } from '../../composition'
+import { parseSqlTime } from '../../../db/time'
+import { presentRecord, publicDate, writeLength } from '../../presenters/records'
+import { besideInClass, listedByNo, type ListRow } from '../../read-models/records/list'
+import { publicHistory } from '../../read-models/records/history'
+import { findSheetById } from '../../repositories/sheets'
+import { presentLine } from '../scores/scoreSheet'
+import { readSheet } from '../sheets/read'
+import { t } from '../texts/translate'
+import { ranksOf, standingIn } from './ranks'
+
+/** How many records of the same list are shown above and below. */
+const NEIGHBOURS = 2
+
+/**
+ * One record as the public sees it: its line, its sheet explained, its ranks, its neighbours and what has happened to it.
+ *
+ * @throws DomainError `not_found` for a number that no record in the lists has
+ */
+export async function readRecord(registry: Registry, recordNo: number, locale: string): Promise<RecordAnswer> {
+  const { db } = registry
+  const row = await listedByNo(db, recordNo)
+  if (!row) throw new DomainError('not_found')
+  const say: Say = (key, params) => t(locale, key, params)
+  const [{ timeZone }, region, inDistrict, above, below, events, sheet] = await Promise.all([
+    registry.settings(),
+    standingIn(db, row, { districtId: null, method: undefined }),
+    standingIn(db, row, { districtId: row.district_id, method: undefined }),
+    besideInClass(db, row, 'above', NEIGHBOURS),
+    besideInClass(db, row, 'below', NEIGHBOURS),
+    publicHistory(db, row.entry_id),
+    row.sheet_id === null ? null : presentSheet(registry, row.sheet_id, say),
+  ])
+  const beside: ListRow[] = [...above, row, ...below]
+  const rank = await ranksOf(db, beside, { districtId: null, method: undefined })
+  const { position: _, ...line } = presentRecord(row, region.rank, null, say)
+  return {
+    ...line,
+    region: { rank: region.rank, total: region.total, sharedBy: region.sharedBy },
+    inDistrict: { rank: inDistrict.rank, total: inDistrict.total, sharedBy: inDistrict.sharedBy },
+    districtName: row.district,
+    sheet,
+    neighbours: beside.map(one => ({
+      recordNo: one.record_no, rank: rank(one), net: writeLength(one.net16, one.step), hunter: one.hunter_shown, district: one.district, takenOn: publicDate(one),
+    })),
+    history: events.map(event => ({ on: dayIn(timeZone, parseSqlTime(event.at)), what: event.kind })),
+  }
+}
+
+async function presentSheet(registry: Registry, sheetId: number, say: Say): Promise<RecordAnswer['sheet']> {
+  const row = await findSheetById(registry.db, sheetId)
+  if (!row) return null
+  const { definition, score } = readSheet(row)
+  const shown = (steps: number) => formatSteps(steps, definition.step)
+  return {
+    definition: definition.id,
+    step: `${definition.step} in`,
+    measurements: JSON.parse(row.measurements) as Record<string, unknown>,
+    measuredOn: row.measured_on?.slice(0, 4) ?? null,
+    totals: {
+      gross: shown(score.gross), grossAll: shown(score.grossAll), differences: shown(score.differences),
+      abnormal: shown(score.abnormal), added: shown(score.added), net: shown(score.net),
+    },
+    lines: score.lines.map(line => presentLine(definition, line, say)),
+  }
+}
