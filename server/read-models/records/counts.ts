@@ -63,7 +63,7 @@ export async function districtCounts(db: Knex, scope: FacetScope) {
 /** Records by method under the other filters; those without a method are left out. */
 export async function methodCounts(db: Knex, scope: FacetScope) {
   const rows = await facets(db, { ...scope, method: undefined }).whereNot('f.method', '').groupBy('f.method').select('f.method').sum({ n: 'f.n' })
-  return new Map(rows.map((row: { method: string, n: number }) => [row.method, Number(row.n)]))
+  return new Map<string, number>(rows.map((row: { method: string, n: number }) => [row.method, Number(row.n)]))
 }
 
 /** First and last year that the records under the filters were taken in. */
