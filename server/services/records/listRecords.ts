@@ -23,7 +23,7 @@ export async function listRecords(registry: Registry, query: RecordsQuery, local
   const sort = asked ?? defaultSort(filters)
   const order = orderOf(sort)
   const bound = fingerprint([sort, filters])
-  const place = cursor ? readCursor(cursor, bound, order.length, registry.config.secret) : null
+  const place = cursor ? readCursor(cursor, bound, registry.config.secret) : null
   const scope = await scopeOf(registry, filters)
   const [found, counted] = await Promise.all([listPage(registry.db, scope, sort, limit, place), totalOf(registry.db, scope)])
 
