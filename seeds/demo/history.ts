@@ -1,12 +1,14 @@
 import type { Knex } from 'knex'
 import { addDays, type Day } from '#shared/domain/dates'
 import { checksFor } from '#shared/domain/workflow/checks'
+import { PAPERS } from '#shared/domain/workflow/origins'
 import { isSecondMeasuringDue } from '#shared/domain/workflow/remeasuring'
 import { DEFAULT_LIMITS } from '#shared/domain/workflow/limits'
 import { nextId } from '../bulk'
 import { Chains } from './chain'
 import { measuredAgain } from './heads'
 import { type DemoPerson, formerMeasurers, measurerFor, type People, type Staff } from './people'
+import type { PaperDesk, PromisedPaper } from './paper-files'
 import { castFor, ownerFor } from './persons'
 import { type PlannedRecord, type Scorer, scorerFor } from './plan'
 import { type Random, uidAt } from './random'
@@ -30,6 +32,8 @@ export interface HistoryFrame {
   readonly workflowVersion: number
   readonly statement: WholeWay['statement']
   readonly random: Random
+  /** where papers are drawn and kept; without one there are none */
+  readonly desk: PaperDesk | null
   readonly progress: (done: number, total: number) => void
 }
 
@@ -76,6 +80,7 @@ class HistoryWriter {
   private readonly place: Place
   private readonly numbers: Numbers
   private written: number[] = []
+  private papers: PromisedPaper[] = []
   private taken = 0
   private entrantsRecords = 0
 
@@ -158,6 +163,14 @@ class HistoryWriter {
       statement: frame.statement,
       checks: checksFor(plan.origin, isOnTheLine(plan)),
     }, this.place, this.chains, this.numbers)
+    this.promisePapers(subject, timeline.submittedAt)
+  }
+
+  /** The papers that the origin asks for, as they came in with the submission. */
+  private promisePapers({ plan, entryId, cast, random }: Subject, at: Date): void {
+    for (const kind of PAPERS[plan.origin]) {
+      this.papers.push({ entryId, category: plan.category, kind, at, by: cast.owner!.userId, random: random.fork(kind) })
+    }
   }
 
   /** Two blind sheets and the one that both signed; it stays over the minimum, since these are accepted. */
@@ -187,6 +200,8 @@ class HistoryWriter {
       SET e.state = 'accepted', e.signed_sheet_id = s.id, e.standing_sheet_id = r.sheet_id
       WHERE e.id BETWEEN ? AND ?`, range)
     await db.raw('UPDATE animals a JOIN entries e ON e.animal_id = a.id SET a.live_entry_id = e.id WHERE e.id BETWEEN ? AND ?', range)
+    await this.frame.desk?.deliver(db, this.papers, false)
     this.written = []
+    this.papers = []
   }
 }

@@ -4,6 +4,7 @@ import { STATEMENT_TEXTS } from '../reference/statement-texts'
 import { DEMO_PASSWORD } from './accounts'
 import { writeHistory } from './history'
 import { writeOpenEntries } from './open-entries'
+import { PaperDesk, type PaperStore } from './paper-files'
 import { People, seedStaff } from './people'
 import { planRecords, type PlannedRecord } from './plan'
 import { randomFor } from './random'
@@ -15,6 +16,8 @@ export interface DemoOptions {
   /** share of the full number of records; 1 for the demo, little for tests */
   readonly scale?: number
   readonly progress?: (text: string) => void
+  /** where papers are kept; without it entries have none */
+  readonly files?: PaperStore
 }
 
 /** How far a database has got with the demo; `half` is one whose seeding was stopped and has to be made anew. */
@@ -31,7 +34,7 @@ const dayOf = (at: Date) => new Date(at.getTime() - 7 * 3600_000).toISOString().
  * Fills an empty, migrated and reference-seeded database with the invented society: the same society, people and records
  * for the same day, whatever the machine.
  */
-export async function seedDemo(db: Knex, { now, scale = 1, progress = () => {} }: DemoOptions): Promise<void> {
+export async function seedDemo(db: Knex, { now, scale = 1, progress = () => {}, files }: DemoOptions): Promise<void> {
   if (await db('users').first('id')) throw new Error('Demo data goes into an empty database only')
   const random = randomFor('ochre basin')
   const today = dayOf(now)
@@ -52,14 +55,17 @@ export async function seedDemo(db: Knex, { now, scale = 1, progress = () => {} }
   // By the day of acceptance; within one sitting the classes come as they lie in the pile.
   plans.sort((a, b) => (a.plan.acceptedOn === b.plan.acceptedOn ? a.turn - b.turn : a.plan.acceptedOn < b.plan.acceptedOn ? -1 : 1))
 
+  const desk = files ? await PaperDesk.begin(db, files, now) : null
   await writeHistory(plans.map(({ plan }) => plan), {
-    db, ids, staff, people, sittings, workflowVersion, statement: STATEMENT_TEXTS[0], random: random.fork('history'),
+    db, ids, staff, people, sittings, workflowVersion, statement: STATEMENT_TEXTS[0], random: random.fork('history'), desk,
     progress: (done, total) => progress(`Writing records: ${done} of ${total}`),
   })
   progress('Entries that are under way')
-  await writeOpenEntries({
+  const papers = await writeOpenEntries({
     db, ids, staff, people, past: sittings, workflowVersion, statement: STATEMENT_TEXTS[0], random: random.fork('open'), now, today,
   })
+  progress('Drawing their papers')
+  await desk?.deliver(db, papers, true)
   await countLists(db)
   await db('settings').where({ name: 'demoSeeded' }).update({ value: 'true' })
 }

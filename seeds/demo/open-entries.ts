@@ -1,13 +1,13 @@
 import type { Knex } from 'knex'
 import { addDays, type Day, parseInexactDate } from '#shared/domain/dates'
 import { STEPS_PER_INCH } from '#shared/domain/measuring/index'
-import type { DocumentKind } from '#shared/domain/workflow/origins'
 import { sqlTime } from '../../db/time'
 import { insertMany, nextId } from '../bulk'
 import { Chains } from './chain'
 import { writeContested } from './contested'
-import { growHead } from './heads'
+import { growHead, type Head } from './heads'
 import { type DemoPerson, measurerFor, type People, type Staff } from './people'
+import type { PromisedPaper } from './paper-files'
 import { castFor } from './persons'
 import { latestDayInSeason, type PlannedRecord, scorerFor } from './plan'
 import { type Random, uidAt } from './random'
@@ -15,20 +15,10 @@ import { scoredSheet, type Subject } from './record-rows'
 import { Rows } from './rows'
 import { type Players, type Scene, SCENES } from './scenes'
 import type { PastSitting } from './sittings'
-import { OFFERED } from './society'
+import { type DemoClass, OFFERED } from './society'
 import type { SocietyIds } from './society-data'
 import { type DemoSitting, type Stage, Story } from './story'
 import type { WholeWay } from './whole-way'
-
-/** A paper that was promised to an entry and is still to be drawn and stored. */
-export interface PromisedPaper {
-  readonly entryId: number
-  readonly category: string
-  readonly kind: DocumentKind
-  readonly at: Date
-  readonly by: number
-  readonly random: Random
-}
 
 export interface OpenFrame {
   readonly db: Knex
@@ -126,7 +116,7 @@ async function beginStory(scene: Scene, turn: number, frame: OpenFrame, stage: S
   const target16 = scene.over === 'top'
     ? await topNet16(frame, scene.category)
     : OFFERED[scene.category].min16 * (1 + (scene.over ?? 0.01 + 0.04 * random.exponential()))
-  const head = growHead(scene.category, Math.ceil(target16 * STEPS_PER_INCH[definition.step] / 16), random.fork('head'), netOf)
+  const head = scene.twice ? await headOfRecord(frame, scene.category) : growHead(scene.category, Math.ceil(target16 * STEPS_PER_INCH[definition.step] / 16), random.fork('head'), netOf)
   const hunted = (scene.origin ?? 'hunted') === 'hunted'
   const takenOn = hunted ? latestDayInSeason(definition.species, addDays(frame.today, -scene.taken), random) : addDays(frame.today, -scene.taken)
   const plan: PlannedRecord = {
@@ -153,8 +143,15 @@ function ownerOf(scene: Scene, { staff, people }: OpenFrame, at: Date): DemoPers
   }
 }
 
+/** The head of a record of the class that stands in the lists already, as it was measured. */
+async function headOfRecord({ db, ids }: OpenFrame, category: string): Promise<Head> {
+  const sheet = await db('records as r').join('sheets as s', 's.id', 'r.sheet_id').where({ 'r.class_id': ids.category.get(category)!.id })
+    .where('r.net16', '>=', OFFERED[category as DemoClass].min16).orderBy('r.record_no', 'desc').first('s.measurements') as { measurements: string }
+  return JSON.parse(sheet.measurements) as Head
+}
+
 /** A net that would be among the first five of its class, but for the best. */
 async function topNet16({ db, ids }: OpenFrame, category: string): Promise<number> {
   const nets: number[] = await db('records').where({ class_id: ids.category.get(category)!.id }).orderBy('net16', 'desc').limit(3).pluck('net16')
-  return (nets.at(-1) ?? OFFERED[category as keyof typeof OFFERED].min16) + 4
+  return (nets.at(-1) ?? OFFERED[category as DemoClass].min16) + 4
 }

@@ -35,6 +35,8 @@ export interface Scene {
   readonly origin?: Origin
   /** net over the minimum, as a share; `top` would be among the first of its class */
   readonly over?: number | 'top'
+  /** the readings are those of a record that stands already: somebody entered a head twice */
+  readonly twice?: true
   readonly tell: (story: Story, players: Players) => void
 }
 
@@ -82,7 +84,7 @@ export const SCENES: readonly Scene[] = [
   { category: 'moose', district: 'alderfall', owner: 'other', begun: 40, taken: 100, origin: 'found', tell: (story, p) => story.begin().askMeasurer(34, p.near).certify(28, p.near).sendIn(12) },
   { category: 'cougar', district: 'fennickshaw', owner: 'other', begun: 30, taken: 290, tell: (story, p) => story.begin().askMeasurer(26, p.near).certify(18, p.near).sendIn(9).check(3, p.reviewer2, ALL_HUNTED) },
   { category: 'bison', district: 'quillan-flats', owner: 'other', begun: 28, taken: 330, tell: (story, p) => story.begin().askMeasurer(24, p.near).certify(16, p.near).sendIn(5) },
-  { category: 'mule-deer-nontypical', district: 'skarncliff', owner: 'other', begun: 26, taken: 360, tell: (story, p) => story.begin().askMeasurer(20, p.near).certify(12, p.near).sendIn(2) },
+  { category: 'mule-deer-nontypical', district: 'skarncliff', owner: 'other', begun: 26, taken: 360, twice: true, tell: (story, p) => story.begin().askMeasurer(20, p.near).certify(12, p.near).sendIn(2) },
   { category: 'grizzly-bear', district: 'alderfall', owner: 'other', begun: 120, taken: 200, tell: (story, p) => story.begin().askMeasurer(110, p.near).certify(98, p.near).sendIn(70)
     .declineIneligible(40, p.reviewer2, 'altered_parts', 'A tooth socket on the right was filled before the head was measured.')
     .appeal(14, 'The filling is bone cement of the preparator and lies outside both measuring places. A letter of the preparator is with the file.') },

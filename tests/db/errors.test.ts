@@ -58,6 +58,26 @@ describe('a database that is away', () => {
     await nowhere.destroy()
   })
 
+  it('a pool whose connections were cut comes back by itself', async () => {
+    const pool = connect({ ...databaseConfig('mysql://none/none'), ...(await whereIs(db)), poolMax: 2 })
+    const [[first]] = await pool.raw('SELECT CONNECTION_ID() AS id') as [{ id: number }[]]
+    await db.raw('KILL ?', [first!.id])
+    await new Promise(resolve => setTimeout(resolve, 100))
+    const [[second]] = await pool.raw('SELECT CONNECTION_ID() AS id') as [{ id: number }[]]
+    expect(second!.id).not.toBe(first!.id)
+    await pool.destroy()
+  })
+
+  it('a connection that is cut under a statement is told as away', async () => {
+    const pool = connect({ ...databaseConfig('mysql://none/none'), ...(await whereIs(db)), poolMax: 1 })
+    const [[{ id }]] = await pool.raw('SELECT CONNECTION_ID() AS id') as [[{ id: number }]]
+    const asleep = told(pool.raw('SELECT SLEEP(5)'))
+    await new Promise(resolve => setTimeout(resolve, 100))
+    await db.raw('KILL ?', [id])
+    expect(await asleep).toMatchObject({ code: 'database_away', status: 503 })
+    await pool.destroy()
+  })
+
   it('a statement that takes too long is given up by the server', async () => {
     const hasty = connect({ ...databaseConfig('mysql://none/none'), ...(await whereIs(db)), statementTimeout: 300 })
     const began = Date.now()
