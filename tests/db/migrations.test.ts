@@ -1,6 +1,7 @@
 import { readdirSync, readFileSync } from 'node:fs'
 import { beforeAll, describe, expect, it } from 'vitest'
 import type { Knex } from 'knex'
+import { openDatabase } from '../../db/connection'
 import { MIGRATIONS } from '../../db/migrations'
 import { latest, migrateDown, migrateUp, schemaVersion } from '../../db/migrate'
 import { migrationIndex } from '../../scripts/lib/migration-index'
@@ -46,6 +47,34 @@ describe('migrations', () => {
     const undone = await migrateDown(db, 3)
     expect(undone.map(name => name.replace(/\.ts$/, ''))).toEqual(MIGRATIONS.slice(-3).map(([name]) => name).reverse())
     expect(await migrateUp(db)).toHaveLength(3)
+  })
+
+  it.each(['0003_users', '0032_entries_standing_sheet', '0042_ledger_no_delete', '0076_sheets_measurements_hash'])(
+    '%s goes on where a killed process had carried it out and not noted it', async (name) => {
+      expect(MIGRATIONS.map(([known]) => known)).toContain(name)
+      const before = await schemaText()
+      await db('schema_migrations').where({ name }).delete()
+      expect(await migrateUp(db)).toEqual([name])
+      expect(await schemaText()).toBe(before)
+    })
+
+  it('that fails for another reason stops', async () => {
+    await db('schema_migrations').where({ name: '0002_district_neighbours' }).delete()
+    await db.raw('DROP TABLE district_neighbours')
+    await db.raw('CREATE VIEW district_neighbours AS SELECT 1 AS one')
+    await db('schema_migrations').where({ name: '0001_districts' }).delete()
+    await expect(migrateUp(db)).rejects.toThrow(/district_neighbours/)
+    await db.raw('DROP VIEW district_neighbours')
+    expect(await migrateUp(db)).toEqual(['0002_district_neighbours'])
+  })
+
+  it('run once when two processes begin at the same time, and after one was killed while it held Knex\'s mark', async () => {
+    await migrateDown(db, 5)
+    await db('schema_migrations_lock').update({ is_locked: 1 })
+    const other = openDatabase(own.url)
+    const ran = await Promise.all([migrateUp(db), migrateUp(other)])
+    await other.destroy()
+    expect(ran.map(names => names.length).sort()).toEqual([0, 5])
   })
 
   it('are listed in code as they lie in the folder, in order', () => {
