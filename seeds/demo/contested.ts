@@ -35,15 +35,18 @@ const DOUBTS = [
 /** Records that somebody doubts: reported, checked, under challenge, struck, struck and appealed. */
 export async function writeContested(frame: OpenFrame, planned: DemoSitting): Promise<void> {
   const { db, random } = frame
-  const records: Contested[] = await db('records as r').join('entries as e', 'e.id', 'r.entry_id')
+  const all: (Contested & { accepted_on: string })[] = await db('records as r').join('entries as e', 'e.id', 'r.entry_id')
     .where({ 'r.source': 'certified', 'r.origin': 'hunted' }).where('r.accepted_on', '<', addDays(frame.today, -200))
-    .whereNot('e.owner_user_id', frame.staff.byMail.entrant!.userId).orderBy('r.record_no', 'desc').limit(60)
-    .select('r.id', 'r.entry_id', 'r.animal_id', 'e.uid', 'e.owner_user_id')
+    .whereNot('e.owner_user_id', frame.staff.byMail.entrant!.userId).orderBy('r.record_no', 'desc').limit(160)
+    .select('r.id', 'r.entry_id', 'r.animal_id', 'r.accepted_on', 'e.uid', 'e.owner_user_id')
+  // Whoever voted for a record is barred from what is said against it: the chair of the next sitting must not be among them.
+  const chair = frame.staff.judges[1]!
+  const records = all.filter(record => !frame.past.get(record.accepted_on)!.judges.includes(chair))
   if (records.length < CONTESTED) return
   const picked = Array.from({ length: CONTESTED }, (_, place) => records[Math.floor((place + 0.5) * records.length / CONTESTED)]!)
   const chains = await Chains.begin(db, random.fork('contested'))
   const writer = new ContestWriter(frame, planned, chains, await nextId(db, 'docket_items'))
-  const [reported, reportedToo, checked, challenged, answered, struck, appealed] = picked as [Contested, Contested, Contested, Contested, Contested, Contested, Contested]
+  const [reported, reportedToo, checked, challenged, answered, struck, appealed] = picked as readonly Contested[] as readonly [Contested, Contested, Contested, Contested, Contested, Contested, Contested]
   writer.report(reported, 3, 'reported')
   writer.report(reportedToo, 12, 'reported')
   writer.report(checked, 20, 'checked')
@@ -122,7 +125,7 @@ class ContestWriter {
     const daysAgo = Math.round((this.frame.now.getTime() - challengedAt.getTime()) / DAY)
     this.report(record, daysAgo + 12, 'closed', { takenUpAt: challengedAt, chair: sitting.chair, outcome: 'strike', closedAt: struckAt })
     const item = this.docket(record, 'challenge', sitting.id, ++sitting.items, challengedAt, { at: struckAt, ground, reason })
-    for (const judge of sitting.judges.slice(0, 4)) {
+    for (const judge of sitting.judges.filter(one => one !== this.frame.staff.judges[1])) {
       this.rows.add('ballots', { docket_item_id: item, judge_user_id: judge.userId, vote: 'strike', ground, reason, requests: null, cast_at: sqlTime(new Date(struckAt.getTime() - 600_000)) })
     }
     const events: DemoEvent[] = [

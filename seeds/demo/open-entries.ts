@@ -97,7 +97,7 @@ async function seedComingSittings({ db, staff, now, today, random }: OpenFrame):
   const made = sqlTime(new Date(now.getTime() - 30 * DAY))
   const sittings = [
     { id: first, day: today, chair: staff.judges[0]!, judges: staff.judges.slice(0, 5), state: 'open' as const },
-    { id: first + 1, day: addDays(today, 18), chair: staff.judges[1]!, judges: staff.judges.slice(1, 8), state: 'planned' as const },
+    { id: first + 1, day: addDays(today, 18), chair: staff.judges[1]!, judges: staff.judges, state: 'planned' as const },
   ]
   await insertMany(db, 'sittings', sittings.map(({ id, day, chair, state }) => ({
     id, uid: uidAt(now, random), held_on: day, place: 'Office of the society, Varrowmere', chair_user_id: chair.userId, state,
@@ -122,7 +122,7 @@ async function beginStory(scene: Scene, turn: number, frame: OpenFrame, stage: S
   const plan: PlannedRecord = {
     label: `scene ${turn}`, category: scene.category, way: 'certified', district: scene.district, origin: scene.origin ?? 'hunted', originalOrigin: null,
     method: hunted ? random.weighted({ rifle: 60, compound_bow: 25, muzzleloader: 10, crossbow: 5 }) : null, sex: 'male',
-    taken: parseInexactDate(takenOn)!, measuredOn: addDays(frame.today, -scene.begun), submittedOn: frame.today, acceptedOn: frame.today, head,
+    taken: parseInexactDate(takenOn)!, measuredOn: addDays(frame.today, -scene.begun), submittedOn: frame.today, acceptedOn: frame.today, head, bare: scene.bare ?? false,
   }
   const begunAt = new Date(frame.now.getTime() - scene.begun * DAY)
   const owner = ownerOf(scene, frame, begunAt)

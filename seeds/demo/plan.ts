@@ -25,6 +25,8 @@ export interface PlannedRecord {
   readonly submittedOn: Day
   readonly acceptedOn: Day
   readonly head: Head
+  /** begun and left: neither method nor sex nor guide is said yet */
+  readonly bare?: boolean
 }
 
 /** The definition of a class with its numeric program, made once. */

@@ -37,6 +37,8 @@ export interface Scene {
   readonly over?: number | 'top'
   /** the readings are those of a record that stands already: somebody entered a head twice */
   readonly twice?: true
+  /** begun and left: neither method nor sex nor guide is said yet */
+  readonly bare?: true
   readonly tell: (story: Story, players: Players) => void
 }
 
@@ -54,7 +56,7 @@ const before = (story: Story, players: Players, sentIn: number, reviewer: DemoPe
 export const SCENES: readonly Scene[] = [
   // at home
   { category: 'mule-deer-typical', district: 'juniper-fork', owner: 'entrant', begun: 2, taken: 24, tell: story => story.begin() },
-  { category: 'pronghorn', district: 'quillan-flats', owner: 'entrant', begun: 9, taken: 70, tell: story => story.begin() },
+  { category: 'pronghorn', district: 'quillan-flats', owner: 'entrant', begun: 9, taken: 70, bare: true, tell: story => story.begin() },
   { category: 'elk-typical', district: 'coldiron', owner: 'other', begun: 40, taken: 60, tell: story => story.begin() },
   { category: 'whitetail-typical', district: 'brackwater', owner: 'nobody', begun: 1, taken: 12, tell: (story, p) => story.beginFor(p.shop) },
   { category: 'mule-deer-nontypical', district: 'hollowmarch', owner: 'nobody', begun: 5, taken: 30, tell: (story, p) => story.beginFor(p.shop) },

@@ -49,7 +49,9 @@ export function addWholeWay(way: WholeWay, place: Place, chains: Chains, numbers
   const { subject, timeline, measurer, reviewer, sheet } = way
   const standing = way.panel?.joint ?? sheet
   const fee = feeOf(subject.plan.category, subject.plan.submittedOn)
+  const events = eventsOf(way, standing)
   addEntry(subject, place, timeline.begunAt, {
+    version: events.length,
     state_since: sqlTime(timeline.acceptedAt),
     measurer_user_id: measurer.userId,
     reviewer_user_id: reviewer.userId,
@@ -68,7 +70,7 @@ export function addWholeWay(way: WholeWay, place: Place, chains: Chains, numbers
   })
   addPapersSide(way, place, fee, numbers)
   const jointId = addPanelSide(way, place, numbers)
-  chains.add(place.rows, { id: subject.entryId, uid: subject.entryUid }, eventsOf(way, standing))
+  chains.add(place.rows, { id: subject.entryId, uid: subject.entryUid }, events)
   addRecord(subject, place, standing, timeline.acceptedAt, jointId ?? sheetId, null)
 }
 
