@@ -866,6 +866,7 @@ export interface RecordsRow {
   taken_first_on: string
   taken_last_on: string
   taken_precision: 'day' | 'month' | 'year' | 'unknown'
+  taken_year: number | null
   taken_public: 'year' | 'month'
   hunter_shown: string
   hunter_sort: string

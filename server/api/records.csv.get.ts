@@ -1,7 +1,9 @@
 import { Readable } from 'node:stream'
 import { recordsQuery } from '#shared/schemas/records'
 import { streamCsv } from '../services/records/streamCsv'
+import { listsVersion } from '../read-models/records/names'
 import { defineRoute } from '../utils/defineRoute'
+import { answerFrom } from '../utils/etag'
 import { localeOfRequest } from '../utils/problem'
 
 /** The same selection as `/api/records`, whole, as CSV. */
@@ -10,7 +12,10 @@ export default defineRoute({
   query: recordsQuery.omit({ limit: true, cursor: true }),
   cache: 'public, max-age=5',
   handler: async ({ event, registry, query }) => {
-    const chunks = await streamCsv(registry, query, localeOfRequest(event))
+    const locale = localeOfRequest(event)
+    const version = await listsVersion(registry.db)
+    const chunks = await answerFrom(event, [version, locale, query], () => streamCsv(registry, query, locale, version))
+    if (!chunks) return null
     setResponseHeader(event, 'content-type', 'text/csv; charset=utf-8; header=present')
     setResponseHeader(event, 'content-disposition', 'attachment; filename="hartroll-records.csv"')
     return sendStream(event, Readable.from(chunks))

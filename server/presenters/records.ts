@@ -2,6 +2,7 @@ import { formatSteps, fromSixteenths, keyFigureText, currentDefinition, isCatego
 import type { Method, Sex } from '#shared/domain/workflow/origins'
 import type { RecordLine } from '#shared/schemas/records'
 import type { ListRow } from '../read-models/records/list'
+import type { Names } from '../read-models/records/names'
 
 /** A length in sixteenths as its class writes it, never reduced. */
 export function writeLength(sixteenths: number, step: Step): string {
@@ -14,17 +15,24 @@ export function publicDate(row: Pick<ListRow, 'taken_first_on' | 'taken_precisio
   return row.taken_public === 'month' ? row.taken_first_on.slice(0, 7) : row.taken_first_on.slice(0, 4)
 }
 
+function keyFiguresOf(row: Pick<ListRow, 'key_figures'>, category: string, say: Say): string[] {
+  if (!isCategory(category)) return []
+  const definition = currentDefinition(category)
+  return (JSON.parse(row.key_figures) as KeyFigure[]).map(figure => keyFigureText(say, definition, figure))
+}
+
 /** What the public sees of a record in a list. */
-export function presentRecord(row: ListRow, rank: number, position: number | null, say: Say): RecordLine {
+export function presentRecord(row: ListRow, names: Names, rank: number, position: number | null, say: Say): RecordLine {
+  const category = names.classes.get(row.class_id)!
   return {
     recordNo: row.record_no,
     rank,
-    category: row.category,
-    species: row.species,
-    net: writeLength(row.net16, row.step),
-    gross: writeLength(row.gross16, row.step),
+    category: category.code,
+    species: category.species,
+    net: writeLength(row.net16, category.step),
+    gross: writeLength(row.gross16, category.step),
     hunter: row.hunter_shown,
-    district: row.district,
+    district: names.districts.get(row.district_id)!.name,
     method: row.method as Method | null,
     origin: row.origin,
     originalOrigin: row.original_origin,
@@ -34,9 +42,7 @@ export function presentRecord(row: ListRow, rank: number, position: number | nul
     status: row.status,
     source: row.source,
     formerNo: row.former_no,
-    keyFigures: isCategory(row.category)
-      ? (JSON.parse(row.key_figures) as KeyFigure[]).map(figure => keyFigureText(say, currentDefinition(row.category as never), figure))
-      : [],
+    keyFigures: keyFiguresOf(row, category.code, say),
     position,
   }
 }

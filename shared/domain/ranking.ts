@@ -32,6 +32,32 @@ export function standingOf(counts: readonly NetCount[], net16: number): Standing
   return { rank: above + 1, sharedBy, total: above + sharedBy + below, below }
 }
 
+/** A list by its nets, made once and asked often. */
+export interface Standings {
+  readonly total: number
+  /** Where a net stands that the list holds; for another one `standingOf` is asked. */
+  of(net16: number): Standing | undefined
+  /** records with at least this net */
+  atLeast(net16: number): number
+}
+
+/** Every standing of a list kept as counts by net. Each net may be given once. */
+export function standingsOf(counts: readonly NetCount[]): Standings {
+  const ordered = [...counts].sort((a, b) => b.net16 - a.net16)
+  const total = ordered.reduce((sum, { n }) => sum + n, 0)
+  const standings = new Map<number, Standing>()
+  let above = 0
+  for (const { net16, n } of ordered) {
+    standings.set(net16, { rank: above + 1, sharedBy: n, total, below: total - above - n })
+    above += n
+  }
+  return {
+    total,
+    of: net16 => standings.get(net16),
+    atLeast: net16 => ordered.reduce((sum, count) => sum + (count.net16 >= net16 ? count.n : 0), 0),
+  }
+}
+
 /** Share of the list that stands lower, in whole per cent rounded down; null for an empty list. */
 export function percentile(standing: Standing): number | null {
   return standing.total === 0 ? null : Math.floor((100 * standing.below) / standing.total)

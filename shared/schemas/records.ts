@@ -87,7 +87,8 @@ const standing = z.object({ rank: z.int(), total: z.int(), sharedBy: z.int() })
 export const recordAnswer = recordLine.omit({ position: true }).extend({
   region: standing,
   inDistrict: standing,
-  districtName: z.string(),
+  districtCode: z.string(),
+  scientificName: z.string(),
   sheet: z.object({
     definition: z.string(),
     step: z.string(),

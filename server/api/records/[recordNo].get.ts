@@ -1,7 +1,8 @@
 import { recordNoParams } from '#shared/schemas/records'
 import { readRecord } from '../../services/records/readRecord'
+import { listsVersion } from '../../read-models/records/names'
 import { defineRoute } from '../../utils/defineRoute'
-import { answerWithEtag } from '../../utils/etag'
+import { answerFrom } from '../../utils/etag'
 import { localeOfRequest } from '../../utils/problem'
 
 /** One record with its sheet, its ranks and its history. */
@@ -9,5 +10,9 @@ export default defineRoute({
   access: 'public',
   params: recordNoParams,
   cache: 'public, max-age=5',
-  handler: async ({ event, registry, params }) => answerWithEtag(event, await readRecord(registry, params.recordNo, localeOfRequest(event))),
+  handler: async ({ event, registry, params }) => {
+    const version = await listsVersion(registry.db)
+    const locale = localeOfRequest(event)
+    return answerFrom(event, [version, locale], () => readRecord(registry, params.recordNo, locale, version))
+  },
 })

@@ -1,7 +1,8 @@
 import { recordsQuery } from '#shared/schemas/records'
 import { listRecords } from '../../services/records/listRecords'
+import { listsVersion } from '../../read-models/records/names'
 import { defineRoute } from '../../utils/defineRoute'
-import { answerWithEtag } from '../../utils/etag'
+import { answerFrom } from '../../utils/etag'
 import { localeOfRequest } from '../../utils/problem'
 
 /** A page of the public lists. */
@@ -9,5 +10,9 @@ export default defineRoute({
   access: 'public',
   query: recordsQuery,
   cache: 'public, max-age=5',
-  handler: async ({ event, registry, query }) => answerWithEtag(event, await listRecords(registry, query, localeOfRequest(event))),
+  handler: async ({ event, registry, query }) => {
+    const version = await listsVersion(registry.db)
+    const locale = localeOfRequest(event)
+    return answerFrom(event, [version, locale, query], () => listRecords(registry, query, locale, version))
+  },
 })

@@ -6,6 +6,7 @@ import type { Registry } from '../../composition'
 import { parseSqlTime } from '../../../db/time'
 import { presentRecord, publicDate, writeLength } from '../../presenters/records'
 import { besideInClass, listedByNo, type ListRow } from '../../read-models/records/list'
+import { readNames } from '../../read-models/records/names'
 import { publicHistory } from '../../read-models/records/history'
 import { findSheetById } from '../../repositories/sheets'
 import { presentLine } from '../scores/scoreSheet'
@@ -19,33 +20,36 @@ const NEIGHBOURS = 2
 /**
  * One record as the public sees it: its line, its sheet explained, its ranks, its neighbours and what has happened to it.
  *
+ * @param version of the lists (`listsVersion`), as the caller read it for this answer
  * @throws DomainError `not_found` for a number that no record in the lists has
  */
-export async function readRecord(registry: Registry, recordNo: number, locale: string): Promise<RecordAnswer> {
+export async function readRecord(registry: Registry, recordNo: number, locale: string, version: number): Promise<RecordAnswer> {
   const { db } = registry
-  const row = await listedByNo(db, recordNo)
+  const [row, names] = await Promise.all([listedByNo(db, recordNo), readNames(db)])
   if (!row) throw new DomainError('not_found')
   const say: Say = (key, params) => t(locale, key, params)
   const [{ timeZone }, region, inDistrict, above, below, events, sheet] = await Promise.all([
     registry.settings(),
-    standingIn(db, row, { districtId: null, method: undefined }),
-    standingIn(db, row, { districtId: row.district_id, method: undefined }),
+    standingIn(db, version, row, { districtId: null, method: undefined }),
+    standingIn(db, version, row, { districtId: row.district_id, method: undefined }),
     besideInClass(db, row, 'above', NEIGHBOURS),
     besideInClass(db, row, 'below', NEIGHBOURS),
     publicHistory(db, row.entry_id),
     row.sheet_id === null ? null : presentSheet(registry, row.sheet_id, say),
   ])
+  const { step, scientificName } = names.classes.get(row.class_id)!
   const beside: ListRow[] = [...above, row, ...below]
-  const rank = await ranksOf(db, beside, { districtId: null, method: undefined })
-  const { position: _, ...line } = presentRecord(row, region.rank, null, say)
+  const rank = await ranksOf(db, version, beside, { districtId: null, method: undefined })
+  const { position: _, ...line } = presentRecord(row, names, region.rank, null, say)
   return {
     ...line,
     region: { rank: region.rank, total: region.total, sharedBy: region.sharedBy },
     inDistrict: { rank: inDistrict.rank, total: inDistrict.total, sharedBy: inDistrict.sharedBy },
-    districtName: row.district,
+    districtCode: names.districts.get(row.district_id)!.code,
+    scientificName,
     sheet,
     neighbours: beside.map(one => ({
-      recordNo: one.record_no, rank: rank(one), net: writeLength(one.net16, one.step), hunter: one.hunter_shown, district: one.district, takenOn: publicDate(one),
+      recordNo: one.record_no, rank: rank(one), net: writeLength(one.net16, step), hunter: one.hunter_shown, district: names.districts.get(one.district_id)!.name, takenOn: publicDate(one),
     })),
     history: events.map(event => ({ on: dayIn(timeZone, parseSqlTime(event.at)), what: event.kind })),
   }

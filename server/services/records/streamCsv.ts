@@ -22,10 +22,10 @@ const line = (cells: readonly unknown[]) => stringify([[...cells]], {
 })
 
 /** The list of a query as CSV (RFC 4180), chunk by chunk, with a head line. The filters are checked before the first chunk. */
-export async function streamCsv(registry: Registry, query: Omit<RecordsQuery, 'limit' | 'cursor'>, locale: string): Promise<AsyncIterable<string>> {
+export async function streamCsv(registry: Registry, query: Omit<RecordsQuery, 'limit' | 'cursor'>, locale: string, version: number): Promise<AsyncIterable<string>> {
   const { sort: asked, ...filters } = query
   const sort = asked ?? defaultSort(filters)
-  const scope = await scopeOf(registry, filters)
+  const { scope, names } = await scopeOf(registry, filters)
   const order = orderOf(sort)
 
   async function* chunks(): AsyncGenerator<string> {
@@ -34,9 +34,9 @@ export async function streamCsv(registry: Registry, query: Omit<RecordsQuery, 'l
     for (;;) {
       const found = await listPage(registry.db, scope, sort, CHUNK, place)
       const rows = found.slice(0, CHUNK)
-      const rank = await ranksOf(registry.db, rows, { districtId: scope.districtId, method: filters.method })
+      const rank = await ranksOf(registry.db, version, rows, { districtId: scope.districtId, method: filters.method })
       yield rows.map((row) => {
-        const shown = presentRecord(row, rank(row), null, (key, params) => t(locale, key, params))
+        const shown = presentRecord(row, names, rank(row), null, (key, params) => t(locale, key, params))
         return line(COLUMNS.map(column => shown[column]))
       }).join('')
       if (found.length <= CHUNK) return

@@ -1,0 +1,26 @@
+import { alter } from '../columns'
+
+/** Lists are sorted by the year of taking, never by the day: a day must not be found out by an order. */
+export const { up, down } = alter('records',
+  `ADD COLUMN taken_year SMALLINT UNSIGNED GENERATED ALWAYS AS (IF(taken_precision = 'unknown', 0, YEAR(taken_first_on))) STORED AFTER taken_precision,
+   DROP INDEX ix_records_class_taken,
+   DROP INDEX ix_records_taken,
+   ADD INDEX ix_records_class_year (class_id, taken_year, id),
+   ADD INDEX ix_records_species_year (species_id, taken_year, id),
+   ADD INDEX ix_records_year (taken_year, id),
+   ADD INDEX ix_records_species_gross (species_id, gross16 DESC, id),
+   ADD INDEX ix_records_species_hunter (species_id, hunter_sort, id),
+   ADD INDEX ix_records_gross (gross16 DESC, id),
+   ADD INDEX ix_records_net (net16 DESC, taken_first_on, id),
+   ADD INDEX ix_records_district_net (district_id, net16 DESC, taken_first_on, id)`,
+  `DROP INDEX ix_records_district_net,
+   DROP INDEX ix_records_net,
+   DROP INDEX ix_records_gross,
+   DROP INDEX ix_records_species_hunter,
+   DROP INDEX ix_records_species_gross,
+   DROP INDEX ix_records_year,
+   DROP INDEX ix_records_species_year,
+   DROP INDEX ix_records_class_year,
+   ADD INDEX ix_records_taken (taken_first_on, id),
+   ADD INDEX ix_records_class_taken (class_id, taken_first_on, id),
+   DROP COLUMN taken_year`)
