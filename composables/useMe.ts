@@ -8,11 +8,13 @@ export interface Me {
   readonly email: string
   readonly roles: readonly Role[]
   readonly secondFactor: boolean
+  /** Roles that hold once this session has passed a second factor. */
+  readonly withheld: readonly Role[]
   /** The society whose registry this is. */
   readonly registry: { readonly name: string, readonly timeZone: string, readonly currency: string }
 }
 
-const NOBODY: Me = { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false, registry: { name: '', timeZone: 'UTC', currency: 'USD' } }
+const NOBODY: Me = { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false, withheld: [], registry: { name: '', timeZone: 'UTC', currency: 'USD' } }
 
 export function useMe() {
   const me = useState<Me | null>('me', () => null)

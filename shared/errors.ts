@@ -20,6 +20,8 @@ export const ERRORS = {
   second_factor_required: 403,
   second_factor_setup_required: 403,
   password_wrong: 422,
+  sign_in_failed: 401,
+  email_unconfirmed: 403,
   link_spent: 422,
   stake: 403,
   // the state of things

@@ -7,7 +7,7 @@ export default defineRoute({
     const { societyName, timeZone, currency } = await registry.settings()
     const society = { name: societyName, timeZone, currency }
     return actor
-      ? { signedIn: true, id: actor.uid, name: actor.name, email: actor.email, roles: actor.roles, secondFactor: actor.secondFactor, registry: society }
-      : { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false, registry: society }
+      ? { signedIn: true, id: actor.uid, name: actor.name, email: actor.email, roles: actor.roles, secondFactor: actor.secondFactor, withheld: actor.withheld ?? [], registry: society }
+      : { signedIn: false, id: null, name: '', email: '', roles: [], secondFactor: false, withheld: [], registry: society }
   },
 })

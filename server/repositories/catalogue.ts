@@ -67,3 +67,11 @@ export async function sumLedger(db: Knex, entryId: number): Promise<LedgerSums> 
   const of = (...kinds: string[]) => rows.filter(row => kinds.includes(row.kind)).reduce((sum, row) => sum + Number(row.amount), 0)
   return { settled: of('charge', 'office_payment') - of('refund', 'dispute'), waived: rows.some(row => row.kind === 'waiver') }
 }
+
+export async function listDistricts(db: Knex): Promise<DistrictRecord[]> {
+  return db('districts').orderBy('sort').select('id', 'code', 'name')
+}
+
+export async function listSpeciesCodes(db: Knex): Promise<string[]> {
+  return (await db('species').orderBy('sort').select('code')).map(one => one.code)
+}

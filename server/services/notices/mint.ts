@@ -10,11 +10,11 @@ const DAY = 24 * HOUR
 
 /** How long a link works, and the page that takes it. */
 export const TOKENS: Readonly<Record<TokenKind, { readonly livesMs: number, readonly page: string }>> = {
-  confirm_email: { livesMs: 2 * DAY, page: '/account/confirm' },
-  reset_password: { livesMs: HOUR, page: '/account/reset' },
-  change_email: { livesMs: DAY, page: '/account/change-email' },
-  invite: { livesMs: 14 * DAY, page: '/account/invitation' },
-  first_registrar: { livesMs: DAY, page: '/account/invitation' },
+  confirm_email: { livesMs: 2 * DAY, page: '/confirm' },
+  reset_password: { livesMs: HOUR, page: '/reset' },
+  change_email: { livesMs: DAY, page: '/confirm' },
+  invite: { livesMs: 14 * DAY, page: '/invite' },
+  first_registrar: { livesMs: DAY, page: '/invite' },
   claim: { livesMs: 60 * DAY, page: '/account/claim' },
 }
 

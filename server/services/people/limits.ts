@@ -36,6 +36,7 @@ function waitFor(limit: Limit, row: LimitRow, now: number): number {
  * @throws DomainError `too_many_requests` (429) with `retryAfter` in seconds
  */
 export async function takeTry(registry: Registry, limits: readonly Limit[]): Promise<void> {
+  if (limits.length === 0) return
   const now = registry.clock.now().getTime()
   const wait = await inTransaction(registry.db, async (trx) => {
     const rows = new Map((await lockLimits(trx, limits.map(limit => limit.key))).map(row => [row.key, row]))

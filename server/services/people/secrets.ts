@@ -1,7 +1,7 @@
 import { createCipheriv, createDecipheriv, createHmac, hkdfSync, randomBytes, timingSafeEqual } from 'node:crypto'
 
 /** What a key is for. Keys for two purposes never equal each other although they come from one secret. */
-type Purpose = 'totp' | 'recovery' | 'device' | 'address'
+type Purpose = 'cursor' | 'totp' | 'recovery' | 'device' | 'address'
 
 const SEAL = 'v1'
 const IV_BYTES = 12
