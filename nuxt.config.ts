@@ -9,18 +9,9 @@ const publicRooms = readdirSync(here('./i18n/locales/en'))
   .sort()
 
 export default defineNuxtConfig({
-  compatibilityDate: '2026-11-01',
-  srcDir: '.',
   modules: ['@nuxtjs/tailwindcss', '@pinia/nuxt', '@nuxtjs/i18n', '@sidebase/nuxt-auth', '@nuxt/eslint'],
-  devtools: { enabled: false },
-  telemetry: false,
-  experimental: { checkOutdatedBuildInterval: false },
-  features: { inlineStyles: false },
-  ignore: ['.data/**', 'tests/**', 'db/**', 'seeds/**', 'scripts/**', 'docs/**'],
   components: [{ path: '~/components', pathPrefix: true }],
-  css: ['~/assets/css/fonts.css'],
-  tailwindcss: { viewer: false, cssPath: '~/assets/css/main.css' },
-  eslint: { config: { standalone: false } },
+  devtools: { enabled: false },
   app: {
     head: {
       htmlAttrs: { lang: 'en' },
@@ -35,13 +26,28 @@ export default defineNuxtConfig({
       ],
     },
   },
-  i18n: {
-    strategy: 'prefix_except_default',
-    defaultLocale: 'en',
-    langDir: 'locales',
-    locales: [{ code: 'en', language: 'en-US', name: 'English', files: publicRooms.map(file => `en/${file}`) }],
-    detectBrowserLanguage: false,
-    compilation: { strictMessage: false },
+  css: ['~/assets/css/fonts.css'],
+  srcDir: '.',
+  ignore: ['.data/**', 'tests/**', 'db/**', 'seeds/**', 'scripts/**', 'docs/**'],
+  routeRules: {
+    '/_nuxt/**': { headers: { 'cache-control': 'public, max-age=31536000, immutable' } },
+  },
+  features: { inlineStyles: false },
+  experimental: { checkOutdatedBuildInterval: false },
+  compatibilityDate: '2026-11-01',
+  nitro: {
+    compressPublicAssets: true,
+    esbuild: { options: { target: 'node20' } },
+  },
+  // Nothing is written into a style sheet as data: the policy lets fonts come from our own address alone.
+  vite: { build: { target: 'es2022', assetsInlineLimit: 0 } },
+  typescript: { strict: true, typeCheck: false, tsConfig: { compilerOptions: { noUncheckedIndexedAccess: true } } },
+  telemetry: false,
+  hooks: {
+    // The sign-in module's client asks for the session on every page; we ask at `/api/me`, and only where it is needed.
+    'app:resolve': (app) => { app.plugins = app.plugins.filter(plugin => !/nuxt-auth\/dist\/runtime\/plugin(?:\.js)?$/.test(plugin.src)) },
+    // Ours answers for the API and leaves pages to Nuxt's own.
+    'nitro:config': (config) => { config.errorHandler = [here('./server/error.ts'), ...[config.errorHandler ?? []].flat()] },
   },
   auth: {
     // The session is read on our own side, page by page: public pages never ask for one on the server.
@@ -51,20 +57,14 @@ export default defineNuxtConfig({
     sessionRefresh: { enablePeriodically: false, enableOnWindowFocus: false },
     globalAppMiddleware: false,
   },
-  nitro: {
-    compressPublicAssets: true,
-    esbuild: { options: { target: 'node20' } },
+  eslint: { config: { stylistic: true } },
+  i18n: {
+    strategy: 'prefix_except_default',
+    defaultLocale: 'en',
+    langDir: 'locales',
+    locales: [{ code: 'en', language: 'en-US', name: 'English', files: publicRooms.map(file => `en/${file}`) }],
+    detectBrowserLanguage: false,
+    compilation: { strictMessage: false },
   },
-  hooks: {
-    // The sign-in module's client asks for the session on every page; we ask at `/api/me`, and only where it is needed.
-    'app:resolve': (app) => { app.plugins = app.plugins.filter(plugin => !/nuxt-auth\/dist\/runtime\/plugin(?:\.js)?$/.test(plugin.src)) },
-    // Ours answers for the API and leaves pages to Nuxt's own.
-    'nitro:config': (config) => { config.errorHandler = [here('./server/error.ts'), ...[config.errorHandler ?? []].flat()] },
-  },
-  routeRules: {
-    '/_nuxt/**': { headers: { 'cache-control': 'public, max-age=31536000, immutable' } },
-  },
-  typescript: { strict: true, typeCheck: false, tsConfig: { compilerOptions: { noUncheckedIndexedAccess: true } } },
-  // Nothing is written into a style sheet as data: the policy lets fonts come from our own address alone.
-  vite: { build: { target: 'es2022', assetsInlineLimit: 0 } },
+  tailwindcss: { viewer: false, cssPath: '~/assets/css/main.css' },
 })

@@ -18,6 +18,7 @@ interface DriverQuery {
 }
 
 /** The dialect's class, as far as it is overridden here; Knex publishes no types for it. */
+// eslint-disable-next-line @typescript-eslint/no-unused-vars -- it is declared to be a type, since there is no value of it here
 declare class Dialect extends knex.Client {
   _driver(): unknown
   _query(connection: DriverConnection, query: DriverQuery): Promise<unknown>

@@ -75,7 +75,8 @@ export async function startMariadb(options) {
     const port = options.port ?? await freePort()
     try {
       return await launch({ ...options, folder, data, pidFile, account, port })
-    } catch (error) {
+    }
+    catch (error) {
       const taken = error instanceof PortTaken
       if (taken && options.port === undefined && attempt < 5) continue
       throw taken ? new StartError(`Port ${port} for the database is taken; set HARTROLL_DB_PORT to another one or leave it unset`) : error
@@ -114,7 +115,7 @@ async function launch({ folder, data, pidFile, account, port, password, database
     '--max-connections=200',
     // Only root may skip this: as an ordinary user the server refuses the option.
     ...(account.name ? [`--user=${account.name}`] : []),
-    ...(forTests ? TEST_FLAGS : durableFlags())
+    ...(forTests ? TEST_FLAGS : durableFlags()),
   ])
   const child = spawn(command, args, {
     stdio: 'ignore',
@@ -122,7 +123,7 @@ async function launch({ folder, data, pidFile, account, port, password, database
     detached: true,
     cwd: folder,
     env: { PATH: `${process.env.PATH ?? ''}:/usr/sbin:/usr/bin:/sbin:/bin`, LC_ALL: 'C' },
-    ...(account.ids ?? {})
+    ...(account.ids ?? {}),
   })
   /** @type {Promise<{ code: number | null, signal: string | null }>} */
   const exited = new Promise((resolve) => {
@@ -158,7 +159,7 @@ async function launch({ folder, data, pidFile, account, port, password, database
       if (!ended) await endProcess(pid, STOP_LIMIT_MS)
       await exited
       rmSync(pidFile, { force: true })
-    }
+    },
   }
 }
 
@@ -170,7 +171,7 @@ const TEST_FLAGS = [
   '--innodb-buffer-pool-size=256M',
   '--innodb-log-file-size=64M',
   '--innodb-stats-persistent=0',
-  '--innodb-fast-shutdown=1'
+  '--innodb-fast-shutdown=1',
 ]
 
 /** @returns {string[]} a quarter of memory, 256 MB to 2 GB, and every commit on the disk before it is answered */
@@ -179,7 +180,7 @@ function durableFlags() {
   return [
     `--innodb-buffer-pool-size=${Math.min(2048, Math.max(256, quarter))}M`,
     '--innodb-log-file-size=128M',
-    '--innodb-flush-log-at-trx-commit=1'
+    '--innodb-flush-log-at-trx-commit=1',
   ]
 }
 
@@ -234,7 +235,8 @@ function makeFolder(folder) {
     const probe = path.join(folder, `.probe-${process.pid}`)
     writeFileSync(probe, '')
     rmSync(probe)
-  } catch (error) {
+  }
+  catch (error) {
     throw new StartError(`The folder ${folder} cannot be written to (${/** @type {NodeJS.ErrnoException} */ (error).code}); set HARTROLL_DATA to one that can`)
   }
 }
@@ -248,11 +250,11 @@ async function install(data, account) {
     `--auth-root-socket-user=${account.name ?? os.userInfo().username}`,
     '--skip-test-db',
     '--skip-name-resolve',
-    ...(account.name ? [`--user=${account.name}`] : [])
+    ...(account.name ? [`--user=${account.name}`] : []),
   ], {
     env: { PATH: `${process.env.PATH ?? ''}:/usr/sbin:/usr/bin:/sbin:/bin`, LC_ALL: 'C' },
     cwd: data,
-    ...(account.ids ?? {})
+    ...(account.ids ?? {}),
   })
   if (code !== 0) {
     for (const name of readdirSync(data)) rmSync(path.join(data, name), { recursive: true, force: true })
@@ -272,7 +274,7 @@ function initSql({ database, user, password, forTests }) {
     `CREATE USER IF NOT EXISTS ${account} IDENTIFIED BY ${secret};`,
     `ALTER USER ${account} IDENTIFIED BY ${secret};`,
     forTests ? `GRANT ALL ON *.* TO ${account};` : `GRANT ALL ON \`${database.replaceAll('_', '\\_')}\`.* TO ${account};`,
-    ''
+    '',
   ].join('\n')
 }
 

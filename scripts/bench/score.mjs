@@ -25,10 +25,12 @@ function randomSheet(definition, random) {
   for (const line of definition.lines) {
     if (isList(line)) {
       sheet.lists[line.id] = Array.from({ length: random(4) }, () => ({ side: random(2) ? 'right' : 'left', length: 4 + random(60), ...(line.width && random(2) ? { width: random(12) } : {}) }))
-    } else if (hasSides(line)) {
+    }
+    else if (hasSides(line)) {
       sheet.right[line.id] = reading(line)
       sheet.left[line.id] = reading(line)
-    } else sheet.single[line.id] = reading(line)
+    }
+    else sheet.single[line.id] = reading(line)
   }
   return checkMeasurements(definition, sheet)
 }

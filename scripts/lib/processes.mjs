@@ -14,13 +14,15 @@ export function onPath(command) {
 export function isAlive(pid) {
   try {
     process.kill(pid, 0)
-  } catch (error) {
+  }
+  catch (error) {
     return /** @type {NodeJS.ErrnoException} */ (error).code === 'EPERM'
   }
   // A zombie still has a pid; it holds neither port nor file.
   try {
     return !/^State:\s+Z/m.test(readFileSync(`/proc/${pid}/status`, 'utf8'))
-  } catch {
+  }
+  catch {
     return true
   }
 }
@@ -34,7 +36,8 @@ export function isAlive(pid) {
 export function commandLine(pid) {
   try {
     return readFileSync(`/proc/${pid}/cmdline`, 'utf8').replaceAll('\0', ' ')
-  } catch {
+  }
+  catch {
     return ''
   }
 }
@@ -63,7 +66,8 @@ export async function endProcess(pid, graceMs) {
 export function trySignal(pid, signal) {
   try {
     process.kill(pid, signal)
-  } catch {
+  }
+  catch {
     // It is gone already, which is what was wanted.
   }
 }

@@ -25,7 +25,8 @@ export async function step(label, work) {
     const result = await work()
     process.stdout.write(`  ${label}: done in ${seconds(Date.now() - begun)}\n`)
     return result
-  } finally {
+  }
+  finally {
     clearInterval(still)
   }
 }

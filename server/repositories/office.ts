@@ -80,7 +80,7 @@ export async function findLikelyDoubles(db: Knex, query: DoubleQuery): Promise<L
   const sameFacts = query.hunterKey === null || query.takenFirstOn !== query.takenLastOn
     ? []
     : await others().join('entry_people as p', 'p.entry_id', 'e.id').where({ 'p.part': 'hunter', 'p.name_key': query.hunterKey, 'e.taken_first_on': query.takenFirstOn })
-      .where('e.district_id', query.districtId).select('e.uid', 'e.state')
+        .where('e.district_id', query.districtId).select('e.uid', 'e.state')
   const seen = new Set(sameSheet.map(row => row.uid))
   return [
     ...sameSheet.map((row): LikelyDouble => ({ uid: row.uid, state: row.state, same: 'sheet' })),

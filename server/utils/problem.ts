@@ -1,7 +1,7 @@
 import type { H3Event } from 'h3'
 import { getRequestHeader, setResponseHeader, setResponseStatus } from 'h3'
 import type { ZodError } from 'zod'
-import { DomainError, type FieldError } from '../../shared/errors'
+import type { DomainError, FieldError } from '../../shared/errors'
 import { hasText, t } from '../services/texts/translate'
 
 /** A problem document (RFC 9457) with the fields that were refused. */

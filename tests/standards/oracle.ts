@@ -64,7 +64,7 @@ export const TABLE: Readonly<Record<string, Lines>> = {
   'roosevelt-elk': antlered(7, 'taken off', true),
   'tule-elk': antlered(7, 'taken off', true),
   /** A magazine's article on moose and field notes; the single abnormal count and the differences from memory. */
-  moose: {
+  'moose': {
     ...nothing,
     credits: [['greatestSpread', null]],
     compared: ['palmWidth', 'palmLength', 'beamCircumference'],
@@ -72,7 +72,7 @@ export const TABLE: Readonly<Record<string, Lines>> = {
     deductedCount: 'abnormalPointCount',
   },
   /** Two field-judging guides (one class); which lines are compared, and the half inch, from memory. */
-  caribou: {
+  'caribou': {
     ...nothing,
     credits: [['insideSpread', 'mainBeam']],
     compared: ['mainBeam', 'bezLength', 'rearPoint', 'secondTopPoint', 'longestTopPoint', 'topPalmWidth', ...hs],
@@ -83,21 +83,21 @@ export const TABLE: Readonly<Record<string, Lines>> = {
     projections: ['browLength', 'bezLength', 'rearPoint', 'secondTopPoint', 'longestTopPoint'],
     least: '1/2',
   },
-  pronghorn: { ...nothing, compared: ['hornLength', ...quarters, 'prongLength'], recorded: ['insideSpread', 'tipToTip'] },
+  'pronghorn': { ...nothing, compared: ['hornLength', ...quarters, 'prongLength'], recorded: ['insideSpread', 'tipToTip'] },
   'bighorn-sheep': sheep,
   'desert-sheep': sheep,
   'dall-sheep': sheep,
   'stone-sheep': sheep,
   'mountain-goat': goat,
-  bison: goat,
-  muskox: {
+  'bison': goat,
+  'muskox': {
     ...nothing,
     compared: ['hornLength', 'bossWidth', 'firstQuarterWidth', 'secondQuarter', 'thirdQuarter'],
     recorded: ['greatestSpread', 'tipToTip'],
   },
   'black-bear': skull,
   'grizzly-bear': skull,
-  cougar: skull,
+  'cougar': skull,
 }
 
 /** A sheet as written. */
@@ -105,11 +105,11 @@ export interface Sheet {
   single: Record<string, string | number>
   right: Record<string, string | number>
   left: Record<string, string | number>
-  abnormal: { side: string; length: string; width?: string }[]
-  crown: { side: string; length: string }[]
+  abnormal: { side: string, length: string, width?: string }[]
+  crown: { side: string, length: string }[]
 }
 
-export interface Totals { gross: Fraction; differences: Fraction; abnormal: Fraction; crown: Fraction; net: Fraction; grossAll: Fraction }
+export interface Totals { gross: Fraction, differences: Fraction, abnormal: Fraction, crown: Fraction, net: Fraction, grossAll: Fraction }
 
 const known = new Map<string | number, Fraction>()
 const ZERO = new Fraction(0)
@@ -151,7 +151,7 @@ export function secondOpinion(category: string, sheet: Sheet): Totals {
   }
   for (const id of [...lines.notCompared, ...lines.notComparedCounts]) gross = gross.add(side('right', id)).add(side('left', id))
 
-  const real = (point: { length: string; width?: string }) => {
+  const real = (point: { length: string, width?: string }) => {
     const length = inches(point.length, lines.step)
     return length.gte(least) && (point.width === undefined || length.gt(inches(point.width, lines.step))) ? length : ZERO
   }

@@ -11,7 +11,7 @@ declare module 'vitest' {
 
 /** The projects of one run share the server, though each loads this module for itself. */
 interface Shared {
-  [shared]?: { server: Promise<TestServer>, users: number }
+  [shared]?: { server: Promise<TestServer>, users: number } | undefined
 }
 const shared = Symbol.for('hartroll.tests.mariadb')
 
@@ -28,7 +28,7 @@ export default async function setup(project: TestProject): Promise<() => Promise
   project.provide('databaseUrl', server.url)
   return async () => {
     if (--state.users > 0) return
-    delete holder[shared]
+    holder[shared] = undefined
     await server.stop()
   }
 }

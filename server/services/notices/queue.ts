@@ -5,18 +5,18 @@ import { uuidv7 } from '../../../shared/uuid'
 import type { TemplateName } from './templates'
 
 /** A value of a notice, said in the reader's language when it is sent. */
-export type NoticeValue =
-  | string
-  | number
-  | null
+export type NoticeValue
+  = | string
+    | number
+    | null
   /** a text of the message files, e.g. a ground by its code */
-  | { readonly text: string, readonly params?: Readonly<Record<string, string | number>> }
+    | { readonly text: string, readonly params?: Readonly<Record<string, string | number>> }
   /** a calendar day, `YYYY-MM-DD` */
-  | { readonly day: string }
+    | { readonly day: string }
   /** an instant, ISO 8601, shown in the registry's time zone */
-  | { readonly instant: string }
+    | { readonly instant: string }
   /** one line each */
-  | { readonly list: readonly string[] }
+    | { readonly list: readonly string[] }
 
 export interface Notice {
   readonly template: TemplateName

@@ -52,10 +52,10 @@ export interface StakeFacts {
   readonly decidedBy: readonly number[]
 }
 
-export type Stake =
-  | { readonly kind: 'part'; readonly part: Part }
-  | { readonly kind: 'owner' | 'measured' | 'declared' | 'reporter' | 'decided_before' }
-  | { readonly kind: 'same_name' | 'same_address'; readonly part: Part }
+export type Stake
+  = | { readonly kind: 'part', readonly part: Part }
+    | { readonly kind: 'owner' | 'measured' | 'declared' | 'reporter' | 'decided_before' }
+    | { readonly kind: 'same_name' | 'same_address', readonly part: Part }
 
 /** True for a stake that a person with the right may clear with a reason; the others bar for good. */
 export function canBeCleared(stake: Stake): boolean {

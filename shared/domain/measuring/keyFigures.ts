@@ -4,10 +4,10 @@ import { inSum, isPoint } from './score'
 import type { Side } from './units'
 
 /** One of the first things asked at a bench. Lengths in steps, points as counts. */
-export type KeyFigure =
-  | { readonly code: 'points'; readonly right: number; readonly left: number }
-  | { readonly code: 'single'; readonly line: string; readonly steps: number }
-  | { readonly code: 'longer'; readonly line: string; readonly steps: number }
+export type KeyFigure
+  = | { readonly code: 'points', readonly right: number, readonly left: number }
+    | { readonly code: 'single', readonly line: string, readonly steps: number }
+    | { readonly code: 'longer', readonly line: string, readonly steps: number }
 
 /**
  * "How many points, how wide?": points (right x left), widest inside, longer beam; horn length and base; palm; skull.

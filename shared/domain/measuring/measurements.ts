@@ -6,15 +6,15 @@ import type { Argument, Parsed, Side, UnitRefusal } from './units'
 import { LONGEST_INCHES, MOST_POINTS, SIDES, STEPS_PER_INCH, formatSteps, parseCount, parseLength } from './units'
 
 /** Why measurements as written are no sheet: the refusals of units, and what concerns the sheet's form. */
-export type MeasurementRefusal =
-  | UnitRefusal
-  | 'not_a_sheet'
-  | 'unknown_line'
-  | 'not_a_measurement'
-  | 'not_a_list'
-  | 'not_a_side'
-  | 'too_many_points'
-  | 'length_missing'
+export type MeasurementRefusal
+  = | UnitRefusal
+    | 'not_a_sheet'
+    | 'unknown_line'
+    | 'not_a_measurement'
+    | 'not_a_list'
+    | 'not_a_side'
+    | 'too_many_points'
+    | 'length_missing'
 
 /** One bad field: where it is (`right.g2`, `abnormalPoints.0.length`), why, and what the sentence names. */
 export interface Problem {
@@ -87,7 +87,8 @@ function readSingle(
   if (line && isList(line)) {
     const points = readList(definition, line, value, problems)
     if (points) built.lists[line.id] = points
-  } else readReading(definition, line, key, value, built.single, problems)
+  }
+  else readReading(definition, line, key, value, built.single, problems)
 }
 
 function readReading(
@@ -104,7 +105,7 @@ function readReading(
   else problems.push({ path, code: parsed.code, args: parsed.args })
 }
 
-type Unread = { readonly ok: false; readonly code: MeasurementRefusal; readonly args: Readonly<Record<string, Argument>> }
+type Unread = { readonly ok: false, readonly code: MeasurementRefusal, readonly args: Readonly<Record<string, Argument>> }
 
 const notAMeasurement: Unread = { ok: false, code: 'not_a_measurement', args: {} }
 
@@ -222,7 +223,7 @@ function isStoredList(definition: SheetDefinition, line: ListLine, value: unknow
 
 /** A sheet as it is written for people and in answers: the same form that `readMeasurements` reads. */
 export interface WrittenMeasurements {
-  [line: string]: string | number | Record<string, string | number> | { side: Side; length: string; width?: string }[]
+  [line: string]: string | number | Record<string, string | number> | { side: Side, length: string, width?: string }[]
 }
 
 /** Writes checked measurements the way the contract does: `"22 3/8"`, counts as numbers, `"absent"`. */
@@ -237,15 +238,17 @@ export function writeMeasurements(definition: SheetDefinition, measurements: Mea
     if (isList(line)) {
       const points = measurements.lists[line.id]
       if (points) written[line.id] = points.map((point) => writePoint(definition, point))
-    } else if (hasSides(line)) {
+    }
+    else if (hasSides(line)) {
       for (const side of SIDES) put(sides[side], line, measurements[side][line.id])
-    } else put(written, line, measurements.single[line.id])
+    }
+    else put(written, line, measurements.single[line.id])
   }
   for (const side of SIDES) if (Object.keys(sides[side]).length > 0) written[side] = sides[side]
   return written
 }
 
-function writePoint(definition: SheetDefinition, point: ListPoint): { side: Side; length: string; width?: string } {
+function writePoint(definition: SheetDefinition, point: ListPoint): { side: Side, length: string, width?: string } {
   const length = formatSteps(point.length, definition.step)
   return point.width === undefined
     ? { side: point.side, length }

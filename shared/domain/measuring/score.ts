@@ -4,13 +4,13 @@ import type { Side, Step } from './units'
 import { STEPS_PER_INCH } from './units'
 
 /** What happened to a line beyond plain adding; said in the reader's language as `sheet.notes.<code>`. */
-export type Note =
+export type Note
   /** The line counts no more than the longer side of `line`. */
-  | { readonly code: 'capped'; readonly line: string; readonly read: number; readonly counted: number }
+  = | { readonly code: 'capped', readonly line: string, readonly read: number, readonly counted: number }
   /** A projection that is no point: left out of the sum. */
-  | { readonly code: 'left_out'; readonly side: Side; readonly read: number }
+    | { readonly code: 'left_out', readonly side: Side, readonly read: number }
   /** One side lacks the line: the difference is the other side's whole length. */
-  | { readonly code: 'one_side_only'; readonly side: Side; readonly difference: number }
+    | { readonly code: 'one_side_only', readonly side: Side, readonly difference: number }
 
 /** A point of a list, and whether it is one. */
 export interface ScoredPoint extends ListPoint {
@@ -152,7 +152,8 @@ function scoreSingle(line: Line, measurements: Measurements, columns: Columns, p
     }
     share = counted
     columns.credit += counted
-  } else if (line.kind === 'deductedCount') {
+  }
+  else if (line.kind === 'deductedCount') {
     counted = read * per
     share = 0 - counted
     columns.abnormal += counted

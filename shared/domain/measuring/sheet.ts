@@ -83,35 +83,35 @@ export type SlipCode = (typeof SLIP_CODES)[number]
 export const SEVERITIES = ['notice', 'blocking'] as const
 export type Severity = (typeof SEVERITIES)[number]
 
-export type SlipRule =
-  | { readonly code: 'spread_capped' | 'whole_skull'; readonly line: string }
-  | { readonly code: 'not_a_point' | 'unlikely' }
-  | {
+export type SlipRule
+  = | { readonly code: 'spread_capped' | 'whole_skull', readonly line: string }
+    | { readonly code: 'not_a_point' | 'unlikely' }
+    | {
       readonly code: 'circumference_grows'
       /** `to` over `from` by more than `over` steps is a slip. */
-      readonly pairs: readonly { readonly from: string; readonly to: string; readonly over: number }[]
+      readonly pairs: readonly { readonly from: string, readonly to: string, readonly over: number }[]
     }
-  | {
+    | {
       readonly code: 'quarter_not_smaller'
       readonly base: string
       readonly quarters: readonly string[]
       /** Above the base by this many steps or more is a slip. */
       readonly by: number
     }
-  | {
+    | {
       readonly code: 'sides_differ'
       /** Lengths: by this share of the longer (1/n) and by at least so many steps. */
       readonly lengthShare: number
       readonly lengthFrom: number
       readonly circumferenceFrom: number
     }
-  | {
+    | {
       readonly code: 'tape_offset'
       readonly from: number
       readonly to: number
       readonly lines: number
     }
-  | {
+    | {
       readonly code: 'gap_in_points'
       readonly severity: Severity
       /** Points in the order in which they rise from the beam; one given after one that is not there is a slip. */
@@ -119,11 +119,11 @@ export type SlipRule =
     }
 
 /** The first things that are asked at a bench, by family. */
-export type KeyFigureRule =
-  | { readonly code: 'points'; readonly beam: string; readonly points: readonly string[] }
-  | { readonly code: 'counted_points'; readonly lines: readonly string[] }
-  | { readonly code: 'single'; readonly line: string }
-  | { readonly code: 'longer'; readonly line: string }
+export type KeyFigureRule
+  = | { readonly code: 'points', readonly beam: string, readonly points: readonly string[] }
+    | { readonly code: 'counted_points', readonly lines: readonly string[] }
+    | { readonly code: 'single', readonly line: string }
+    | { readonly code: 'longer', readonly line: string }
 
 export const FAMILIES = ['deer', 'elk', 'moose', 'caribou', 'pronghorn', 'sheep', 'goat', 'bison', 'muskox', 'skull'] as const
 export type Family = (typeof FAMILIES)[number]

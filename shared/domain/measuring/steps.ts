@@ -17,7 +17,7 @@ export const TOTALS = { gross: 0, grossAll: 1, differences: 2, abnormal: 3, adde
 export interface Program {
   readonly definition: string
   /** Which reading each slot holds, in order. */
-  readonly slots: readonly { readonly id: string; readonly place: 'single' | Side }[]
+  readonly slots: readonly { readonly id: string, readonly place: 'single' | Side }[]
   readonly lists: readonly string[]
   /** Per credit: slot, slots of the line that caps it (or NOT_THERE twice). */
   readonly credits: Int32Array
@@ -32,7 +32,7 @@ export interface Program {
 /** Turns a definition into a program. Do it once for many sheets. */
 export function compile(definition: SheetDefinition): Program {
   const per = STEPS_PER_INCH[definition.step]
-  const slots: { id: string; place: 'single' | Side }[] = []
+  const slots: { id: string, place: 'single' | Side }[] = []
   const at = new Map<string, number>()
   for (const line of definition.lines) {
     if (isList(line)) continue
@@ -49,7 +49,8 @@ export function compile(definition: SheetDefinition): Program {
     if (line.kind === 'credit') {
       const cap = line.capBy === undefined ? NOT_THERE : at.get(line.capBy) as number
       credits.push(slot, cap, cap === NOT_THERE ? NOT_THERE : cap + 1)
-    } else if (line.kind === 'paired') pairs.push(slot, slot + 1, line.pointFrom ?? 0, 1, line.difference ? 1 : 0)
+    }
+    else if (line.kind === 'paired') pairs.push(slot, slot + 1, line.pointFrom ?? 0, 1, line.difference ? 1 : 0)
     else if (line.kind === 'countPair') pairs.push(slot, slot + 1, 0, per, line.difference ? 1 : 0)
     else if (line.kind === 'deductedCount') counts.push(slot, per)
     else if (isList(line)) points.push(line.pointFrom, line.kind === 'addedList' ? 1 : 0, line.tally === 'abnormal' ? 1 : 0)

@@ -19,13 +19,13 @@ export const LONGEST_INCHES = 240
 export const MOST_POINTS = 200
 
 /** An argument of a code: what the sentence in the reader's language will name. */
-export type Argument =
-  | { readonly steps: number; readonly step: Step }
-  | { readonly count: number }
-  | { readonly line: string }
-  | { readonly side: Side }
-  | { readonly text: string }
-  | { readonly date: string }
+export type Argument
+  = | { readonly steps: number, readonly step: Step }
+    | { readonly count: number }
+    | { readonly line: string }
+    | { readonly side: Side }
+    | { readonly text: string }
+    | { readonly date: string }
 
 /** The animal's own sides. Seen from the front, its right is at the reader's left. */
 export const SIDES = ['right', 'left'] as const
@@ -53,7 +53,7 @@ export interface Refused {
 }
 
 /** A length in whole steps, or a count; or why it is none. */
-export type Parsed = { readonly ok: true; readonly value: number } | Refused
+export type Parsed = { readonly ok: true, readonly value: number } | Refused
 
 const refuse = (code: UnitRefusal, args: Record<string, Argument> = {}): Refused => ({ ok: false, code, args })
 const accept = (value: number): Parsed => ({ ok: true, value })

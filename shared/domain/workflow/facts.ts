@@ -7,11 +7,11 @@ import type { Vote } from './panel'
 import type { State } from './states'
 
 /** Who performs a transition. Only a person has an account, a name and stakes. */
-export type Performer =
-  | { readonly kind: 'person', readonly actor: ActiveActor, readonly keys: PersonKeys }
-  | { readonly kind: 'panel' }
-  | { readonly kind: 'clock' }
-  | { readonly kind: 'system' }
+export type Performer
+  = | { readonly kind: 'person', readonly actor: ActiveActor, readonly keys: PersonKeys }
+    | { readonly kind: 'panel' }
+    | { readonly kind: 'clock' }
+    | { readonly kind: 'system' }
 
 export interface Accreditation {
   readonly validFrom: Day

@@ -10,13 +10,13 @@ import type { WorkflowLimits } from './limits'
 import type { Party, TransitionRow } from './rows'
 import type { State } from './states'
 
-export type Refusal =
-  | { readonly kind: 'unknown_transition' }
+export type Refusal
+  = | { readonly kind: 'unknown_transition' }
   /** none of the parties that may perform it */
-  | { readonly kind: 'forbidden' }
-  | { readonly kind: 'wrong_state', readonly state: State | null, readonly from: readonly State[] }
-  | { readonly kind: 'stake', readonly stakes: readonly string[] }
-  | { readonly kind: 'guards', readonly failed: readonly GuardFailure[] }
+    | { readonly kind: 'forbidden' }
+    | { readonly kind: 'wrong_state', readonly state: State | null, readonly from: readonly State[] }
+    | { readonly kind: 'stake', readonly stakes: readonly string[] }
+    | { readonly kind: 'guards', readonly failed: readonly GuardFailure[] }
 
 export interface Move {
   readonly ok: true

@@ -35,8 +35,8 @@ const rounds: readonly Line[] = [round('h1', 'elk.h1'), round('h2', 'elk.h2'), r
 const abnormal = (kind: 'deductedList' | 'addedList'): Line =>
   ({ id: 'abnormalPoints', text: 'abnormalPoints', kind, nature: 'point', tally: 'abnormal', pointFrom: INCH, width: true, wide: [0, 40] })
 
-const crown: Line =
-  { id: 'crownPoints', text: 'crownPoints', kind: 'addedList', nature: 'point', tally: 'crown', pointFrom: INCH, width: false, wide: [0, 30] }
+const crown: Line
+  = { id: 'crownPoints', text: 'crownPoints', kind: 'addedList', nature: 'point', tally: 'crown', pointFrom: INCH, width: false, wide: [0, 30] }
 
 const slips: readonly SlipRule[] = [
   { code: 'whole_skull', line: 'insideSpread' },
