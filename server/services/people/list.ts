@@ -39,5 +39,6 @@ export async function findPeople(registry: Registry, actor: ActiveActor, query: 
 export async function findPerson(registry: Registry, actor: ActiveActor, uid: string) {
   const person = await readPerson(registry.db, uid, registry.clock.now())
   if (!person) throw new DomainError('not_found')
-  return { ...person, own: person.id === actor.uid, species: await listSpeciesCodes(registry.db) }
+  const seconds = (await listRegistrars(registry.db, registry.clock.now())).filter(one => one.id !== actor.userId && one.email !== person.email)
+  return { ...person, own: person.id === actor.uid, secondNeeded: seconds.length > 0, species: await listSpeciesCodes(registry.db) }
 }
