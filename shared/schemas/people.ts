@@ -55,7 +55,7 @@ export const enableFactorSchema = z.object({ code: z.string().min(1).max(40) })
 export const idParams = z.object({ id: z.uuid() })
 
 const givenRole = z.enum(GIVEN_ROLES as [string, ...string[]]).transform(role => role as (typeof STAFF_ROLES)[number] | 'shop')
-export const inviteSchema = z.object({ name: nameField, email: emailField, role: givenRole.nullable(), ...proof })
+export const inviteSchema = z.object({ name: nameField, email: emailField, role: z.preprocess(value => (value === '' ? null : value), givenRole.nullable()), ...proof })
 export const roleSchema = z.object({ role: givenRole, ...proof })
 export const roleParams = z.object({ id: z.uuid(), role: givenRole })
 export const decisionSchema = z.object({ decision: z.enum(['grant', 'refuse', 'withdraw']), ...proof })

@@ -1,5 +1,5 @@
 /** What the link is for with which a page was opened from a letter. Asked in the browser; it does not spend the link. */
-export function useLink() {
+export function useMailLink() {
   const route = useRoute()
   const token = computed(() => String(route.query.token ?? ''))
   const state = ref<'loading' | 'good' | 'spent' | 'failed'>('loading')
