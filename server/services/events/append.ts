@@ -1,9 +1,8 @@
-import { randomBytes } from 'node:crypto'
 import type { Knex } from 'knex'
 import type { Json } from '../../../shared/domain/canonical'
 import { findLastEvent, insertEvent } from '../../repositories/events'
-import { chainEvent } from '../entries/eventChain'
 import type { Moment } from '../moment'
+import { commitmentTo, eventHash, newSalt } from './hash'
 
 export interface EventToAppend {
   /** transition, or the name of an act that does not move the entry */
@@ -22,10 +21,20 @@ export interface EventToAppend {
  * entry row, so that no two events ever take one number.
  */
 export async function appendEvent(trx: Knex.Transaction, entry: { readonly id: number, readonly uid: string }, event: EventToAppend, moment: Moment): Promise<void> {
-  const texts = Object.fromEntries(Object.entries(event.texts ?? {}).filter((pair): pair is [string, string] => typeof pair[1] === 'string' && pair[1] !== ''))
-  const chained = chainEvent({
-    entryId: entry.id, entryUid: entry.uid, kind: event.kind, fromState: event.from ?? null, toState: event.to ?? null,
-    at: moment.now, actor: event.actor, args: event.args ?? {}, texts,
-  }, await findLastEvent(trx, entry.id) ?? null, () => randomBytes(16))
-  await insertEvent(trx, chained.row, chained.texts)
+  const before = await findLastEvent(trx, entry.id)
+  const texts = Object.entries(event.texts ?? {})
+    .filter((pair): pair is [string, string] => typeof pair[1] === 'string' && pair[1] !== '')
+    .map(([field, body]) => ({ field, salt: newSalt(), body }))
+  const commitments = Object.fromEntries(texts.map(text => [text.field, commitmentTo(text.salt, text.body)]))
+  const seq = (before?.seq ?? 0) + 1
+  const args = event.args ?? {}
+  const hash = eventHash({
+    entry: entry.uid, seq, at: moment.now.toISOString(), kind: event.kind, from: event.from ?? null, to: event.to ?? null,
+    actor: event.actor?.uid ?? null, args, commitments, prev: before?.hash ?? null,
+  })
+  await insertEvent(trx, {
+    entry_id: entry.id, seq, at: moment.at, kind: event.kind, from_state: event.from ?? null, to_state: event.to ?? null,
+    actor_user_id: event.actor?.userId ?? null, args: JSON.stringify(args), commitments: JSON.stringify(commitments),
+    prev_hash: before?.hash ?? null, hash,
+  }, texts)
 }
