@@ -1,4 +1,4 @@
-import { formatSteps, type Say } from '../../../shared/domain/measuring/index'
+import { formatSteps, writeMeasurements, type Say } from '../../../shared/domain/measuring/index'
 import { DomainError } from '../../../shared/errors'
 import type { RecordAnswer } from '../../../shared/schemas/records'
 import { dayIn } from '../../clock'
@@ -58,12 +58,12 @@ export async function readRecord(registry: Registry, recordNo: number, locale: s
 async function presentSheet(registry: Registry, sheetId: number, say: Say): Promise<RecordAnswer['sheet']> {
   const row = await findSheetById(registry.db, sheetId)
   if (!row) return null
-  const { definition, score } = readSheet(row)
+  const { definition, measurements, score } = readSheet(row)
   const shown = (steps: number) => formatSteps(steps, definition.step)
   return {
     definition: definition.id,
     step: `${definition.step} in`,
-    measurements: JSON.parse(row.measurements) as Record<string, unknown>,
+    measurements: writeMeasurements(definition, measurements),
     measuredOn: row.measured_on?.slice(0, 4) ?? null,
     totals: {
       gross: shown(score.gross), grossAll: shown(score.grossAll), differences: shown(score.differences),
