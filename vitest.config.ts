@@ -14,6 +14,7 @@ interface Group {
 }
 
 const GROUPS: readonly Group[] = [
+  { name: 'meta', order: 0, testTimeout: 60_000 },
   { name: 'unit', order: 0, testTimeout: 20_000 },
   { name: 'standards', order: 0, testTimeout: 120_000 },
   { name: 'db', order: 1, globalSetup: DATABASE, testTimeout: 30_000 },
