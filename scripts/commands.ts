@@ -3,7 +3,10 @@ import { connect } from '../db/connection'
 import { latest, migrateUp, schemaVersion } from '../db/migrate'
 import { seedReference } from '../seeds/reference'
 import { systemClock } from '../server/clock'
+import { createRegistry } from '../server/composition'
 import { ConfigError, type HartrollConfig } from '../server/config'
+import { firstRegistrarLink } from '../server/services/people/invite'
+import { isDomainError } from '../shared/errors'
 import { checkRegistry } from '../server/services/integrity/check'
 
 /** @returns exit code */
@@ -57,4 +60,24 @@ const check: Command = async (config) => {
   }
 }
 
-export const commands: Readonly<Record<string, Command>> = { config, prepare, check }
+/** Prints a one-time link for the first registrar. */
+const registrar: Command = async (config, [address]) => {
+  if (!address) throw new ConfigError('Say whose: npm run registrar -- MAIL')
+  const registry = createRegistry(config)
+  try {
+    const link = await firstRegistrarLink(registry, address)
+    say(`A link for ${address}, good for a day and once:`)
+    say(link)
+    return 0
+  }
+  catch (error) {
+    if (isDomainError(error) && error.code === 'duplicate') throw new ConfigError('There is a registrar already; they invite everybody else.')
+    if (isDomainError(error) && error.code === 'invalid_input') throw new ConfigError(`${address} is not an e-mail address.`)
+    throw error
+  }
+  finally {
+    await registry.close()
+  }
+}
+
+export const commands: Readonly<Record<string, Command>> = { config, prepare, check, registrar }

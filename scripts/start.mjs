@@ -7,6 +7,7 @@ import { randomBytes } from 'node:crypto'
 import path from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { ensureBuild } from './build.mjs'
+import { childEnvironment, urlHost } from './lib/childEnvironment.mjs'
 import { installMariadbServer } from './lib/debian.mjs'
 import { readEnvironment } from './lib/environment.mjs'
 import { ensurePackages } from './lib/packages.mjs'
@@ -28,8 +29,8 @@ const begun = Date.now()
 /** @type {(() => Promise<void>)[]} what to stop, the last started first */
 const stops = []
 let stopping = false
-/** @type {Record<string, number>} process ids of what this start runs */
-const running = {}
+/** @type {{ start: number, databaseUrl: string | null, parts: Record<string, number> }} what this start runs */
+const running = { start: process.pid, databaseUrl: null, parts: {} }
 
 for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
   process.on(signal, () => {
@@ -84,7 +85,7 @@ async function start() {
 }
 
 /** @typedef {import('./lib/environment.mjs').Environment} Environment */
-/** @typedef {{ id: string, databasePassword: string, demo: boolean }} Instance */
+/** @typedef {import('./lib/childEnvironment.mjs').Instance} Instance */
 
 /** @param {string} folder */
 function makeDataFolder(folder) {
@@ -125,8 +126,8 @@ async function takeDataFolder(folder) {
 
 /** @param {string} folder @param {Record<string, number>} parts */
 function noteRunning(folder, parts) {
-  Object.assign(running, parts)
-  writeJson(path.join(folder, 'running.json'), { start: process.pid, parts: running })
+  Object.assign(running.parts, parts)
+  writeJson(path.join(folder, 'running.json'), running)
 }
 
 /** @param {string} code @param {Environment} wishes */
@@ -145,42 +146,6 @@ function readInstance(folder) {
   const made = { id: randomBytes(4).toString('hex'), databasePassword: randomBytes(24).toString('base64url'), demo: false }
   writeJson(file, made)
   return made
-}
-
-/** @param {Environment} wishes @param {Instance} instance @returns {Record<string, string | undefined>} */
-function childEnvironment(wishes, instance) {
-  const publicUrl = (wishes.publicUrl ?? `http://${urlHost(wishes.host)}:${wishes.port}`).replace(/\/$/, '')
-  return {
-    ...process.env,
-    NODE_ENV: 'production',
-    HOST: wishes.host,
-    PORT: String(wishes.port),
-    NITRO_HOST: wishes.host,
-    NITRO_PORT: String(wishes.port),
-    NITRO_SHUTDOWN_TIMEOUT: String(DRAIN_MS - 1_000),
-    HARTROLL_MODE: wishes.mode,
-    HARTROLL_DATA: wishes.dataDir,
-    HARTROLL_SECRET: wishes.secret ?? demoSecret(wishes.dataDir),
-    HARTROLL_PUBLIC_URL: publicUrl,
-    HARTROLL_INSTANCE: instance.id,
-    AUTH_ORIGIN: `${publicUrl}/api/auth`,
-    NEXTAUTH_URL: `${publicUrl}/api/auth`,
-    HARTROLL_OWN_DATABASE: undefined,
-    ...(wishes.databaseUrl === null ? {} : { DATABASE_URL: wishes.databaseUrl }),
-  }
-}
-
-/** @param {string} host what a browser on this machine can open */
-function urlHost(host) {
-  if (host === '0.0.0.0' || host === '::') return '127.0.0.1'
-  return host.includes(':') ? `[${host}]` : host
-}
-
-/** @param {string} folder @returns {string} made once, so that nobody is signed out by a restart */
-function demoSecret(folder) {
-  const file = path.join(folder, 'secret')
-  if (!existsSync(file)) writeFileSync(file, randomBytes(32).toString('hex'), { mode: 0o600 })
-  return readFileSync(file, 'utf8').trim()
 }
 
 /** @param {string} address */
@@ -259,6 +224,7 @@ async function openDatabase(wishes, instance) {
     })
   }
   watch()
+  running.databaseUrl = server.url
   noteRunning(wishes.dataDir, { database: server.pid })
   stops.push(() => server.stop())
   return server.url
