@@ -1,5 +1,5 @@
 /** Texts of the desk's rooms come with the desk alone: a public page does not carry them. */
-const rooms = import.meta.glob<Record<string, unknown>>('../i18n/locales/*/{account,bench,desk,entry,notices,office,panel,people,registrar}.json', { import: 'default' })
+const rooms = import.meta.glob<Record<string, unknown>>('../i18n/locales/*/{account,bench,desk,entry,mailbox,notices,office,panel,people,registrar}.json', { import: 'default' })
 
 export default defineNuxtRouteMiddleware(async (to) => {
   if (to.meta.layout !== 'desk' && to.meta.texts !== 'desk') return

@@ -3,8 +3,9 @@ import common from './common.json'
 import errors from './errors.json'
 import sheet from './sheet.json'
 import names from './names.json'
+import notices from './notices.json'
 import people from './people.json'
 import states from './states.json'
 
 /** Every text that the server says. A room is added here when something outside a page speaks its words. */
-export default { ...animals, ...common, ...errors, ...sheet, ...names, ...people, ...states }
+export default { ...animals, ...common, ...errors, ...sheet, ...names, ...notices, ...people, ...states }
