@@ -74,6 +74,12 @@ describe('every line is explained', () => {
     })
   })
 
+  it('is complete when every counting line is measured or not there, recorded lines or not', () => {
+    const side = { hornLength: '10', baseCircumference: '5', firstQuarter: '4', secondQuarter: '3', thirdQuarter: 'absent' }
+    expect(scored('mountain-goat', { right: side, left: side })).toMatchObject({ complete: true, missing: [], unrecorded: ['greatestSpread', 'tipToTip'] })
+    expect(scored('mountain-goat', { right: side, left: { ...side, thirdQuarter: '' } })).toMatchObject({ complete: false, missing: ['left.thirdQuarter'] })
+  })
+
   it('stands in the order in which a person adds: spreads, beams, points, circumferences, lists', () => {
     expect(scored('whitetail-typical', {}).lines.map(({ id }) => id)).toEqual([
       'tipToTip', 'greatestSpread', 'points', 'insideSpread', 'mainBeam', 'g1', 'g2', 'g3', 'g4', 'g5', 'g6', 'g7', 'h1', 'h2', 'h3', 'h4', 'abnormalPoints',
@@ -145,9 +151,10 @@ describe('what may be scored roughly only', () => {
 
   it('a running figure takes only lines that are not measured yet as equal', () => {
     const head = read('elk-typical', { insideSpread: '40', right: { mainBeam: '50', g1: '10', g2: '9' }, left: { g1: 'absent', g2: '8', g3: '11' } })
-    expect(matchUnmeasured(currentDefinition('elk-typical'), head)).toMatchObject({
-      right: { mainBeam: 400, g1: 80, g2: 72, g3: 88 }, left: { mainBeam: 400, g1: 'absent', g2: 64, g3: 88 },
+    expect(matchUnmeasured(currentDefinition('elk-typical'), head)).toEqual({
+      ...head, right: { mainBeam: 400, g1: 80, g2: 72, g3: 88 }, left: { mainBeam: 400, g1: 'absent', g2: 64, g3: 88 },
     })
+    expect(Object.keys(matchUnmeasured(currentDefinition('elk-typical'), head).right)).toEqual(['mainBeam', 'g1', 'g2', 'g3'])
   })
 })
 

@@ -67,7 +67,7 @@ describe('what is no length is refused with a code of its own', () => {
     ['-2', 'negative'], ['- 2', 'negative'], ['−2', 'negative'], ['-.5', 'negative'], ['-21 3/8', 'negative'],
     ['241', 'too_long'], ['240 1/8', 'too_long'], ['240.125', 'too_long'], ['99999999', 'too_long'], ['99999999 1/8', 'too_long'], ['1000000000', 'too_long'], ['99999999.5', 'too_long'],
     ['21 9/8', 'fraction_over_one'], ['21 8/8', 'fraction_over_one'], ['21 8', 'fraction_over_one'], ['21-9', 'fraction_over_one'], ['21 2/2', 'fraction_over_one'], ['9/8', 'fraction_over_one'],
-    ['٢١', 'other_digits'], ['۲۱', 'other_digits'], ['२१', 'other_digits'], ['２１', 'other_digits'], ['২১', 'other_digits'], ['๒๑', 'other_digits'], ['𝟐𝟏', 'unreadable'],
+    ['٢١', 'other_digits'], ['۲۱', 'other_digits'], ['२१', 'other_digits'], ['２１', 'other_digits'], ['২১', 'other_digits'], ['๒๑', 'other_digits'], ['٠', 'other_digits'], ['９', 'other_digits'], ['𝟐𝟏', 'unreadable'],
     ['21,375', 'comma'], ['1,000', 'comma'], ['x1,5', 'unreadable'], ['1,5x', 'unreadable'],
   ])('%s: %s', (written, code) => {
     expect(value(written)).toBe(code)
