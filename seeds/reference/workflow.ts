@@ -31,7 +31,7 @@ const ROWS: readonly Omit<TransitionRow, 'sort'>[] = [
   row('certify', {
     from: ['measuring'], to: 'certified', parties: ['assigned_measurer'],
     guards: ['sheet_complete', 'sheet_of_class', 'no_blocking_slip', 'dried_long_enough', 'accredited_when_measured', 'no_stake', 'signed_by_password'],
-    effects: ['go_back', 'lock_sheet', 'tell_entrant'],
+    effects: ['go_back', 'lock_sheet', 'come_back_to_docket', 'tell_entrant'],
   }),
   row('reopen', { from: ['certified'], to: 'draft', parties: ['entrant'] }),
   row('submit', {

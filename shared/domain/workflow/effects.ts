@@ -7,7 +7,7 @@ export const EFFECTS = [
   // the office
   'pin_term', 'mark_submitted', 'take_review', 'clear_review', 'change_class', 'mark_revived', 'mark_appealed', 'refuse_entry',
   // the panel
-  'fix_second_measuring', 'put_on_docket', 'put_appeal_on_docket', 'put_challenge_on_docket', 'carry_docket_item', 'remove_docket_item',
+  'fix_second_measuring', 'put_on_docket', 'put_appeal_on_docket', 'put_challenge_on_docket', 'come_back_to_docket', 'carry_docket_item', 'remove_docket_item',
   'plan_remeasuring', 'end_remeasuring', 'cancel_remeasuring', 'note_not_presented', 'stand_panel_sheet', 'ask_requests',
   // the lists
   'publish_record', 'mark_challenged', 'unmark_challenged', 'take_from_lists', 'put_back_in_lists', 'amend_record',

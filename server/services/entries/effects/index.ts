@@ -4,7 +4,7 @@ import type { Effect } from './context'
 import { amendRecord, liftHold, markChallenged, publishRecord, putBackInLists, refundFee, takeFromLists, unmarkChallenged } from './lists'
 import { changeClass, claimAnimal, clearReview, freeAnimal, markAppealed, markRevived, markSubmitted, noteWithdrawalAsked, pinTerm, refuseEntry, setHold, takeReview } from './office'
 import {
-  askRequests, cancelRemeasuring, carryDocketItem, closeChallenge, endRemeasuring, fixSecondMeasuring, noteNotPresented, planRemeasuring, putAppealOnDocket,
+  askRequests, cancelRemeasuring, carryDocketItem, comeBackToDocket, closeChallenge, endRemeasuring, fixSecondMeasuring, noteNotPresented, planRemeasuring, putAppealOnDocket,
   putChallengeOnDocket, putOnDocket, removeDocketItem, standPanelSheet, takeUpChallenge,
 } from './panel'
 
@@ -34,6 +34,7 @@ export const EFFECTS: Readonly<Record<EffectName, Effect>> = {
   put_on_docket: putOnDocket,
   put_appeal_on_docket: putAppealOnDocket,
   put_challenge_on_docket: putChallengeOnDocket,
+  come_back_to_docket: comeBackToDocket,
   carry_docket_item: carryDocketItem,
   remove_docket_item: removeDocketItem,
   plan_remeasuring: planRemeasuring,

@@ -1,10 +1,11 @@
 import { isSecondMeasuringDue } from '../../../../shared/domain/workflow/remeasuring'
+import type { Knex } from 'knex'
 import { standingOf } from '../../../../shared/domain/ranking'
 import { DomainError } from '../../../../shared/errors'
 import { sqlTime } from '../../../../db/time'
 import { insertRequest } from '../../../repositories/office'
 import {
-  findNextSitting, findOpenItem, findSittingById, insertItem, insertRemeasuring, listChallenges, nextPosition, updateChallenge, updateItem, updateRemeasuring,
+  findNextSitting, findOpenItem, findSittingById, insertItem, insertRemeasuring, listChallenges, lockSittingById, nextPosition, updateChallenge, updateItem, updateRemeasuring,
 } from '../../../repositories/panel'
 import { listCounts } from '../../../repositories/records'
 import { deleteOpenSheet, findOpenSheet, findSheetById } from '../../../repositories/sheets'
@@ -13,8 +14,14 @@ import { matterOf } from '../context'
 import { sayNet } from '../say'
 import type { Effect, EffectContext } from './context'
 
+/** The sitting if its docket still takes items: one that was closed meanwhile does not. */
+async function openDocket(trx: Knex.Transaction, sittingId: number | null): Promise<number | null> {
+  const sitting = sittingId === null ? undefined : await lockSittingById(trx, sittingId)
+  return sitting && sitting.state !== 'closed' ? sitting.id : null
+}
+
 async function putItem({ trx, context, input, moment, says, args }: EffectContext, kind: 'entry' | 'appeal' | 'challenge'): Promise<void> {
-  const sittingId = input.sittingId ?? (await findNextSitting(trx, moment.today))?.id ?? null
+  const sittingId = await openDocket(trx, input.sittingId ?? (await findNextSitting(trx, moment.today))?.id ?? null)
   const uid = newUid(moment.now)
   await insertItem(trx, {
     uid, sitting_id: sittingId, entry_id: context.entry.id, kind, position: sittingId === null ? 0 : await nextPosition(trx, sittingId),
@@ -30,14 +37,21 @@ export const putAppealOnDocket: Effect = effect => putItem(effect, 'appeal')
 export const putChallengeOnDocket: Effect = effect => putItem(effect, 'challenge')
 
 /** Says, before the docket opens, whether a second measuring is due: by the certified net's place over all methods of the region. */
-export const fixSecondMeasuring: Effect = async ({ trx, context, workflow, args }) => {
-  const { entry } = context
+export const fixSecondMeasuring: Effect = async ({ trx, context, patch, workflow, args }) => {
+  const entry = { ...context.entry, ...patch as { net16?: number } }
   const counts = await listCounts(trx, { class_id: entry.class_id, district_id: 0, method: '' })
   const place = standingOf(counts, entry.net16!)
   const due = isSecondMeasuringDue({ total: place.total, higher: place.rank - 1, equal: place.sharedBy }, workflow.limits)
   const item = await findOpenItem(trx, entry.id)
   await updateItem(trx, item!.id, { second_measuring_due: due ? 1 : 0 })
   args.secondMeasuringDue = due
+}
+
+/** A new certificate for the panel brings the entry back to a docket, where its net is looked at anew. */
+export const comeBackToDocket: Effect = async (effect) => {
+  if (effect.move.to !== 'at_panel') return
+  await putOnDocket(effect)
+  await fixSecondMeasuring(effect)
 }
 
 /** An item that cannot be decided now leaves its sitting; the matter itself comes back on a later docket. */
