@@ -1,4 +1,5 @@
 import type { Registry } from '../../composition'
+import { runClock } from '../entries/clock'
 import { forgetSpent } from '../../repositories/sweeping'
 
 interface Task {
@@ -9,6 +10,7 @@ interface Task {
 
 /** What happens by the clock alone. A round begins once, however many workers there are. */
 export const TASKS: Readonly<Record<string, Task>> = {
+  clock: { everyMinutes: 10, run: runClock },
   forget_spent: { everyMinutes: 60, run: registry => forgetSpent(registry.db, registry.clock.now()) },
 }
 

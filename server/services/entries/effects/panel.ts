@@ -10,6 +10,7 @@ import {
 import { listCounts } from '../../../repositories/records'
 import { deleteOpenSheet, findOpenSheet, findSheetById } from '../../../repositories/sheets'
 import { newUid } from '../../moment'
+import { refreshRecord } from '../../listing/publish'
 import { matterOf } from '../context'
 import { sayNet } from '../say'
 import type { Effect, EffectContext } from './context'
@@ -98,6 +99,8 @@ export const standPanelSheet: Effect = async ({ trx, context, patch, args, says 
   if (!joint || joint.state !== 'signed') throw new DomainError('internal', { logLine: `no signed joint sheet for entry ${context.entry.uid}` })
   Object.assign(patch, { standing_sheet_id: joint.id, net16: joint.net16, gross16: joint.gross16 })
   Object.assign(args, { sheet: joint.uid, fromNet16: context.entry.net16, net16: joint.net16 })
+  // a challenged record keeps standing in the lists, by its new net
+  await refreshRecord(trx, { ...context, entry: { ...context.entry, ...patch } as typeof context.entry })
   says.net = sayNet(joint.net16!, context.category.step)
 }
 
