@@ -7,7 +7,7 @@ import path from 'node:path'
 import { fileURLToPath, pathToFileURL } from 'node:url'
 import { failWith, say, StartError, step } from './lib/report.mjs'
 import { ensurePackages } from './lib/packages.mjs'
-import { commandLine, isAlive, run, sleep } from './lib/processes.mjs'
+import { commandLine, endCommands, isAlive, run, sleep } from './lib/processes.mjs'
 import { sourcesDigest } from './lib/sources.mjs'
 
 const ROOT = fileURLToPath(new URL('..', import.meta.url))
@@ -121,6 +121,12 @@ async function withLock(work) {
 }
 
 if (import.meta.url === pathToFileURL(process.argv[1] ?? '').href) {
+  for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
+    process.on(signal, async () => {
+      await endCommands()
+      process.exit(130)
+    })
+  }
   try {
     await ensurePackages(ROOT)
     if (!await ensureBuild()) say('  The build is current')

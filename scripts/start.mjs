@@ -12,7 +12,7 @@ import { installMariadbServer } from './lib/debian.mjs'
 import { readEnvironment } from './lib/environment.mjs'
 import { ensurePackages } from './lib/packages.mjs'
 import { whyNotListen } from './lib/ports.mjs'
-import { commandLine, endProcess, isAlive, run, sleep } from './lib/processes.mjs'
+import { commandLine, endCommands, endProcess, isAlive, run, sleep } from './lib/processes.mjs'
 import { describe, say, seconds, StartError, step } from './lib/report.mjs'
 import { keepRunning } from './lib/supervise.mjs'
 import { hasMariadb, startMariadb } from './mariadb.mjs'
@@ -198,7 +198,13 @@ async function openDatabase(wishes, instance) {
   const folder = path.join(wishes.dataDir, 'mariadb')
   const fresh = !existsSync(path.join(folder, 'data', 'mysql'))
   const open = (/** @type {number | undefined} */ port) => startMariadb({ folder, password: instance.databasePassword, ...(port === undefined ? {} : { port }) })
-  let server = await (fresh ? step('Making the database', () => open(wishes.databasePort)) : open(wishes.databasePort))
+  const opening = open(wishes.databasePort)
+  /** @type {import('./mariadb.mjs').Mariadb | null} */
+  let latest = null
+  // Also when it is told to stop while the server is still starting.
+  stops.push(async () => (latest ?? await opening.catch(() => null))?.stop())
+  let server = await (fresh ? step('Making the database', () => opening) : opening)
+  latest = server
   let restarts = 0
   const watch = () => {
     server.exited.then(async () => {
@@ -208,7 +214,7 @@ async function openDatabase(wishes, instance) {
         try {
           if (++restarts > 50) throw new StartError('The database ended fifty times; giving up')
           // The same port: web and worker know it and come back by themselves.
-          server = await open(server.port)
+          server = latest = await open(server.port)
           if (stopping) await server.stop()
           noteRunning(wishes.dataDir, { database: server.pid })
           break
@@ -226,7 +232,6 @@ async function openDatabase(wishes, instance) {
   watch()
   running.databaseUrl = server.url
   noteRunning(wishes.dataDir, { database: server.pid })
-  stops.push(() => server.stop())
   return server.url
 }
 
@@ -251,7 +256,6 @@ async function prepareDatabase(wishes, instance, env) {
     cwd: ROOT,
     env: /** @type {NodeJS.ProcessEnv} */ (env),
     quiet: false,
-    stdio: ['ignore', 'inherit', 'inherit'],
   })
   if (code !== 0 && !stopping) throw new StartError(`The database could not be prepared${output ? `: ${output}` : '; the line above says why'}`)
 }
@@ -327,6 +331,7 @@ async function shutDown(code, message) {
   if (stopping) return
   stopping = true
   if (message) say(message)
+  await endCommands()
   for (const stop of stops.reverse()) await stop().catch((/** @type {unknown} */ error) => process.stderr.write(describe(error)))
   if (message) say('Stopped.')
   process.exit(code)

@@ -9,7 +9,7 @@ import { fileURLToPath } from 'node:url'
 import { ensureBuild } from './build.mjs'
 import { installDebian, installMariadbServer } from './lib/debian.mjs'
 import { ensurePackages } from './lib/packages.mjs'
-import { run } from './lib/processes.mjs'
+import { endCommands, run } from './lib/processes.mjs'
 import { describe, failWith, say, seconds, step, StartError } from './lib/report.mjs'
 import { hasMariadb } from './mariadb.mjs'
 
@@ -37,6 +37,13 @@ const STEPS = [
 const wanted = process.argv.slice(2)
 const unknown = wanted.find(name => !STEPS.some(({ name: known }) => known === name))
 if (unknown) failWith(new StartError(`There is no step "${unknown}"; there are ${STEPS.map(({ name }) => name).join(', ')}`))
+
+for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
+  process.on(signal, async () => {
+    await endCommands()
+    process.exit(130)
+  })
+}
 
 const begun = Date.now()
 const total = { passed: 0, failed: 0 }

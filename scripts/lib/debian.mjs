@@ -20,10 +20,10 @@ export async function installDebian(packages, what, named) {
   const hint = `${what} is missing; install the Debian package ${named} (apt-get install ${named}) and start again`
   if (!isRoot() || !existsSync('/usr/bin/apt-get')) throw new StartError(hint)
   await step(`Installing ${packages.join(', ')} from Debian`, async () => {
-    const install = () => run('apt-get', ['install', '-y', '--no-install-recommends', ...packages], { env: ENV })
+    const install = () => run('apt-get', ['install', '-y', '--no-install-recommends', ...packages], { env: ENV, lasting: true })
     let result = await install()
     if (result.code !== 0) {
-      await run('apt-get', ['update'], { env: ENV })
+      await run('apt-get', ['update'], { env: ENV, lasting: true })
       result = await install()
     }
     if (result.code !== 0) {

@@ -84,23 +84,41 @@ export function tiedToParent(command, args) {
   return onPath('setpriv') ? ['setpriv', ['--pdeathsig', 'TERM', '--', command, ...args]] : [command, args]
 }
 
+/** @type {Set<import('node:child_process').ChildProcess>} commands that run at this moment */
+const underWay = new Set()
+
 /**
  * Runs a command to its end.
  *
  * @param {string} command
  * @param {string[]} args
- * @param {import('node:child_process').SpawnOptions & { quiet?: boolean }} [options] quiet: keep the output and give it back
+ * @param {import('node:child_process').SpawnOptions & { quiet?: boolean, lasting?: boolean }} [options]
+ *   quiet: keep the output and give it back; lasting: not to be cut short, not even when everything stops
  * @returns {Promise<{ code: number, output: string }>} code 127 when the command could not be started
  */
-export function run(command, args, { quiet = true, ...options } = {}) {
+export function run(command, args, { quiet = true, lasting = false, ...options } = {}) {
   return new Promise((resolve) => {
-    const child = spawn(command, args, { stdio: quiet ? ['ignore', 'pipe', 'pipe'] : 'inherit', ...options })
+    const [program, argv] = lasting ? [command, args] : tiedToParent(command, args)
+    // A group of its own: Ctrl-C reaches this process alone, which then ends what it started in order.
+    const child = spawn(program, argv, { stdio: quiet ? ['ignore', 'pipe', 'pipe'] : ['ignore', 'inherit', 'inherit'], detached: true, ...options })
+    if (!lasting) underWay.add(child)
     let output = ''
     child.stdout?.on('data', chunk => (output += chunk))
     child.stderr?.on('data', chunk => (output += chunk))
     child.once('error', error => resolve({ code: 127, output: `${output}${error.message}` }))
-    child.once('close', (code, signal) => resolve({ code: code ?? (signal ? 1 : 0), output }))
+    child.once('close', (code, signal) => {
+      underWay.delete(child)
+      resolve({ code: code ?? (signal ? 1 : 0), output })
+    })
   })
+}
+
+/** Ends the commands that `run` still waits for, with whatever they started themselves. */
+export async function endCommands() {
+  const ending = [...underWay].filter(child => child.pid !== undefined)
+  for (const child of ending) trySignal(-(/** @type {number} */ (child.pid)), 'SIGTERM')
+  await Promise.race([Promise.all(ending.map(child => new Promise(resolve => child.once('close', resolve)))), sleep(2_000)])
+  for (const child of underWay) if (child.pid !== undefined) trySignal(-child.pid, 'SIGKILL')
 }
 
 /**
