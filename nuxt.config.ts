@@ -28,6 +28,8 @@ export default defineNuxtConfig({
   },
   css: ['~/assets/css/fonts.css'],
   srcDir: '.',
+  // Said aloud: left out, a build goes to a cache folder in node_modules as soon as .nuxt exists.
+  buildDir: '.nuxt',
   ignore: ['.data/**', 'tests/**', 'db/**', 'seeds/**', 'scripts/**', 'docs/**'],
   routeRules: {
     '/_nuxt/**': { headers: { 'cache-control': 'public, max-age=31536000, immutable' } },
