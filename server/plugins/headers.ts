@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto'
+import { isHeld } from '../utils/etag'
 
 const INLINE_SCRIPT = /<script(?![^>]*\bsrc=)([^>]*)>([\s\S]*?)<\/script>/g
 
@@ -47,6 +48,14 @@ export default defineNitroPlugin((nitro) => {
     const html = typeof response.body === 'string' ? response.body : ''
     if (!html.startsWith('<!DOCTYPE')) return
     setResponseHeader(event, 'content-security-policy', policy(html))
-    if (!getResponseHeader(event, 'cache-control')) setResponseHeader(event, 'cache-control', 'no-store')
+    if ((response.statusCode ?? getResponseStatus(event)) >= 400) {
+      removeResponseHeader(event, 'etag')
+      setResponseHeader(event, 'cache-control', 'no-store')
+    }
+    else if (!getResponseHeader(event, 'cache-control')) setResponseHeader(event, 'cache-control', 'no-store')
+    else if (!getResponseHeader(event, 'etag') && String(getResponseHeader(event, 'cache-control')).startsWith('public') && isHeld(event, html)) {
+      response.statusCode = 304
+      response.body = ''
+    }
   })
 })

@@ -1,9 +1,13 @@
 import { createHash } from 'node:crypto'
 import { appendResponseHeader, getRequestHeader, setResponseHeader, setResponseStatus, type H3Event } from 'h3'
 
-/** Sets the ETag and says whether the caller holds the same (RFC 9110, section 13.1.2); then the answer is 304. */
-function isHeld(event: H3Event, tag: string): boolean {
-  const etag = `W/"${createHash('sha256').update(tag).digest('base64url').slice(0, 27)}"`
+/**
+ * Sets a weak ETag made from what an answer follows from, such as the version of the lists and the query, and says whether
+ * the caller holds it already (RFC 9110, section 13.1.2): then the status is 304. A new build of the program is another
+ * answer.
+ */
+export function isHeld(event: H3Event, source: unknown): boolean {
+  const etag = `W/"${createHash('sha256').update(JSON.stringify([useRuntimeConfig().app.buildId, source])).digest('base64url').slice(0, 27)}"`
   setResponseHeader(event, 'etag', etag)
   appendResponseHeader(event, 'vary', 'accept-language')
   const held = (getRequestHeader(event, 'if-none-match') ?? '').split(',').map(one => one.trim())
@@ -12,15 +16,12 @@ function isHeld(event: H3Event, tag: string): boolean {
   return true
 }
 
-/**
- * Answers under an ETag made from what the answer follows from, such as the version of the lists and the query, and makes
- * the answer only for a caller who does not hold it yet. A new build of the program is another answer.
- */
+/** Makes the answer only for a caller who does not hold it yet. */
 export async function answerFrom<T>(event: H3Event, source: unknown, make: () => Promise<T>): Promise<T | null> {
-  return isHeld(event, JSON.stringify([useRuntimeConfig().app.buildId, source])) ? null : make()
+  return isHeld(event, source) ? null : make()
 }
 
-/** Answers with a body under a weak ETag made from it, or with 304 when the caller holds the same (RFC 9110, section 13). */
+/** Answers with a body under an ETag made from it, or with 304 when the caller holds the same. */
 export function answerWithEtag<T>(event: H3Event, body: T): T | null {
-  return isHeld(event, JSON.stringify(body)) ? null : body
+  return isHeld(event, body) ? null : body
 }

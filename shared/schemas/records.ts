@@ -87,6 +87,10 @@ const standing = z.object({ rank: z.int(), total: z.int(), sharedBy: z.int() })
 export const recordAnswer = recordLine.omit({ position: true }).extend({
   region: standing,
   inDistrict: standing,
+  /** Whose lists these are, for quoting. */
+  society: z.string(),
+  /** Where the record can be read, for quoting. */
+  url: z.string(),
   districtCode: z.string(),
   scientificName: z.string(),
   sheet: z.object({
@@ -107,6 +111,8 @@ export const recordAnswer = recordLine.omit({ position: true }).extend({
 export type RecordAnswer = z.output<typeof recordAnswer>
 
 export const facetsAnswer = z.object({
+  /** Whose lists these are. */
+  society: z.object({ name: z.string(), region: z.string() }),
   categories: z.array(z.object({ category: z.string(), species: z.string(), count: z.int(), best: length.nullable(), bestRecordNo: z.int().nullable() })),
   districts: z.array(z.object({ code: z.string(), name: z.string(), count: z.int() })),
   methods: z.array(z.object({ method: z.enum(METHODS), count: z.int() })),

@@ -15,7 +15,7 @@ type Dimension = 'class' | 'district' | 'method'
  */
 export async function listFacets(registry: Registry, filters: RecordFilters, version: number): Promise<FacetsAnswer> {
   const { db } = registry
-  const { timeZone } = await registry.settings()
+  const { timeZone, societyName, regionName } = await registry.settings()
   const [{ scope, names }, cells, best, inForce] = await Promise.all([
     scopeOf(registry, filters), readFacets(db, version, filters), readBest(db, version), classesInForce(db, dayIn(timeZone, registry.clock.now())),
   ])
@@ -38,6 +38,7 @@ export async function listFacets(registry: Registry, filters: RecordFilters, ver
     if (cell.last !== null && (last === null || cell.last > last)) last = cell.last
   }
   return {
+    society: { name: societyName, region: regionName },
     categories: [...names.classes.values()].filter(one => offered.has(one.id) || best.has(one.id)).map((one) => {
       const top = best.get(one.id)
       return {

@@ -28,7 +28,7 @@ export async function readRecord(registry: Registry, recordNo: number, locale: s
   const [row, names] = await Promise.all([listedByNo(db, recordNo), readNames(db)])
   if (!row) throw new DomainError('not_found')
   const say: Say = (key, params) => t(locale, key, params)
-  const [{ timeZone }, region, inDistrict, above, below, events, sheet] = await Promise.all([
+  const [{ timeZone, societyName }, region, inDistrict, above, below, events, sheet] = await Promise.all([
     registry.settings(),
     standingIn(db, version, row, { districtId: null, method: undefined }),
     standingIn(db, version, row, { districtId: row.district_id, method: undefined }),
@@ -45,6 +45,8 @@ export async function readRecord(registry: Registry, recordNo: number, locale: s
     ...line,
     region: { rank: region.rank, total: region.total, sharedBy: region.sharedBy },
     inDistrict: { rank: inDistrict.rank, total: inDistrict.total, sharedBy: inDistrict.sharedBy },
+    society: societyName,
+    url: `${registry.config.publicUrl}/records/${row.record_no}`,
     districtCode: names.districts.get(row.district_id)!.code,
     scientificName,
     sheet,
