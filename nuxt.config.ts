@@ -28,7 +28,7 @@ export default defineNuxtConfig({
   },
   css: ['~/assets/css/fonts.css'],
   srcDir: '.',
-  // Beside the sources, not among the packages: copies that share their packages must not share a half-made build.
+  // Said aloud: left out, a build goes to a cache folder in node_modules as soon as .nuxt exists.
   buildDir: '.nuxt',
   ignore: ['.data/**', 'tests/**', 'db/**', 'seeds/**', 'scripts/**', 'docs/**'],
   routeRules: {

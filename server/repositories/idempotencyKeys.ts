@@ -7,13 +7,14 @@ const where = (slot: Slot) => ({ user_id: slot.userId, route: slot.route, key: s
 
 /** Takes the slot; false when somebody has it. */
 export async function insert(db: Knex, slot: Slot, now: Date): Promise<boolean> {
-  // A plain INSERT whose conflict changes nothing: one affected row means that it was ours.
-  const [result] = await db.raw(
-    `INSERT INTO idempotency_keys (user_id, route, \`key\`, body_hash, state, created_at)
-     VALUES (?, ?, ?, ?, 'running', ?) ON DUPLICATE KEY UPDATE user_id = user_id`,
-    [slot.userId, slot.route, slot.key, slot.bodyHash, sqlTime(now)],
-  ) as [{ affectedRows: number }]
-  return result.affectedRows === 1
+  try {
+    await db('idempotency_keys').insert({ ...where(slot), body_hash: slot.bodyHash, state: 'running', created_at: sqlTime(now) })
+    return true
+  }
+  catch (error) {
+    if ((error as { code?: string }).code === 'ER_DUP_ENTRY') return false
+    throw error
+  }
 }
 
 export async function find(db: Knex, slot: Slot) {

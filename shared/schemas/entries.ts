@@ -10,7 +10,7 @@ const code = z.string().trim().max(64).regex(/^[a-z0-9_-]+$/)
 const name = z.string().trim().min(1).max(120)
 const words = (most: number) => z.string().trim().max(most)
 /** `YYYY-MM-DD`, `YYYY-MM`, `YYYY` or `unknown`; read by the domain, which says what is wrong with it. */
-const inexactDate = z.string().trim().max(10)
+const inexactDate = z.string().trim().max(40)
 const day = z.string().regex(/^\d{4}-\d{2}-\d{2}$/)
 
 /** From what the days of drying count: since the animal was taken, or since the head was worked on. */

@@ -1,6 +1,5 @@
 import { z } from 'zod'
-import type { STAFF_ROLES } from '#shared/domain/access/roles'
-import { ROLES } from '#shared/domain/access/roles'
+import { ROLES, STAFF_ROLES } from '#shared/domain/access/roles'
 
 /** Roles that a registrar gives and takes; every account is an entrant. */
 export const GIVEN_ROLES = ROLES.filter(role => role !== 'entrant')
