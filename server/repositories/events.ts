@@ -35,9 +35,10 @@ export async function countAskers(db: Knex, entryId: number, kind: string, since
   return Number(row?.n ?? 0)
 }
 
-/** Accounts that acted on an entry while it lay in a state, before an instant. */
-export async function listActorsFrom(db: Knex, entryId: number, state: string, before: string): Promise<number[]> {
-  const ids: (number | null)[] = await db('entry_events').where({ entry_id: entryId, from_state: state }).where('at', '<', before).distinct().pluck('actor_user_id')
+/** Accounts that acted on an entry while it lay in a state, before it last went from one state to another. */
+export async function listActorsFrom(db: Knex, entryId: number, state: string, before: { from: string, to: string }): Promise<number[]> {
+  const last = await db('entry_events').where({ entry_id: entryId, from_state: before.from, to_state: before.to }).max({ seq: 'seq' }).first() as { seq: number | null } | undefined
+  const ids: (number | null)[] = await db('entry_events').where({ entry_id: entryId, from_state: state }).where('seq', '<', last?.seq ?? 0).distinct().pluck('actor_user_id')
   return ids.filter(id => id !== null)
 }
 

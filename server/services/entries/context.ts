@@ -57,9 +57,8 @@ async function findDeciders(db: Knex, entry: EntriesRow, matter: StakeFacts['mat
     return listVoters(db, applied.filter(item => item.outcome === 'accept' || item.outcome === 'uphold').map(item => item.id))
   }
   if (entry.state === 'struck') return listVoters(db, applied.filter(item => item.outcome === 'strike').map(item => item.id))
-  const before = entry.appealed_at!
-  const declined = applied.filter(item => item.outcome === 'decline' && item.decided_at! < before).map(item => item.id)
-  const reviewers = (await listActorsFrom(db, entry.id, 'in_review', before)).filter(id => id !== entry.owner_user_id)
+  const declined = applied.filter(item => item.outcome === 'decline').map(item => item.id)
+  const reviewers = (await listActorsFrom(db, entry.id, 'in_review', { from: 'declined', to: 'in_review' })).filter(id => id !== entry.owner_user_id)
   return [...await listVoters(db, declined), ...reviewers]
 }
 

@@ -29,6 +29,7 @@ export function refusalError(refusal: Refusal): DomainError {
     case 'stake': return new DomainError('stake', { details: { stakes: [...refusal.stakes] } })
     case 'guards': return new DomainError('guard_failed', {
       fields: guardFields(refusal.failed),
+      logLine: refusal.failed.map(({ guard, items = [] }) => [guard, ...items].join(' ')).join('; '),
       details: { guards: refusal.failed.map(({ guard, items, params }) => ({ guard, items: items ?? [], params: params ?? {} })) },
     })
   }

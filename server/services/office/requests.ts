@@ -75,7 +75,7 @@ export function closeRequest(registry: Registry, actor: ActiveActor, uid: string
 }
 
 /** Ticks a check of a file, or takes the tick away; each names who did it and when. */
-export function setCheck(registry: Registry, actor: ActiveActor, uid: string, code: string, ticked: boolean): Promise<void> {
+export async function setCheck(registry: Registry, actor: ActiveActor, uid: string, code: string, ticked: boolean): Promise<void> {
   if (!isCheckCode(code)) throw new DomainError('not_found')
   return inReview(registry, actor, uid, async (trx, entry, moment) => {
     if (ticked) await tickCheck(trx, { entry_id: entry.id, code, ticked_by: actor.userId, ticked_at: moment.at })

@@ -12,7 +12,7 @@ import { appendEvent } from '../events/append'
  * Says, with a reason, that somebody of the same name or address as a person of the entry is not the same and not close. Given by
  * a registrar without a stake, never for oneself.
  */
-export function clearStake(registry: Registry, actor: ActiveActor, entryUid: string, clearance: { account: string, person: string, kind: Likeness, reason: string }): Promise<void> {
+export async function clearStake(registry: Registry, actor: ActiveActor, entryUid: string, clearance: { account: string, person: string, kind: Likeness, reason: string }): Promise<void> {
   if (!hasRole(actor, 'registrar')) throw new DomainError('forbidden')
   return withEntry(registry, actor, entryUid, async ({ trx, entry, moment }) => {
     const account = await findAccountByUid(trx, clearance.account)
@@ -29,7 +29,7 @@ export function clearStake(registry: Registry, actor: ActiveActor, entryUid: str
 }
 
 /** Declares one's own stake: that one's shop handles the head, or another reason to keep away. It bars from then on. */
-export function declareStake(registry: Registry, actor: ActiveActor, entryUid: string, declaration: { kind: 'shop' | 'other', reason: string | null }): Promise<void> {
+export async function declareStake(registry: Registry, actor: ActiveActor, entryUid: string, declaration: { kind: 'shop' | 'other', reason: string | null }): Promise<void> {
   if (!hasAnyRole(actor, [...STAFF_ROLES, 'shop'])) throw new DomainError('forbidden')
   return withEntry(registry, actor, entryUid, async ({ trx, entry, moment }) => {
     if ((await listDeclarers(trx, entry.id)).includes(actor.userId)) return
