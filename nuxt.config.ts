@@ -3,7 +3,7 @@ import { fileURLToPath } from 'node:url'
 
 const here = (path: string) => fileURLToPath(new URL(path, import.meta.url))
 /** Rooms of the desk are loaded by the desk alone, so that a public page does not carry their texts. */
-const deskRooms = new Set(['account', 'entry', 'bench', 'office', 'panel', 'registrar', 'desk', 'notices', 'people', 'mailbox'])
+const deskRooms = new Set(['account', 'entry', 'bench', 'office', 'panel', 'registrar', 'desk', 'notices', 'payments', 'people', 'mailbox'])
 const publicRooms = readdirSync(here('./i18n/locales/en'))
   .filter(file => file.endsWith('.json') && !deskRooms.has(file.replace('.json', '')))
   .sort()

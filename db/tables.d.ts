@@ -312,6 +312,24 @@ export interface DocumentsInsert {
   removed_at?: string | null
 }
 
+export interface DocumentPagesRow {
+  id: number
+  document_id: number
+  page: number
+  file_id: number
+  width: number
+  height: number
+}
+
+export interface DocumentPagesInsert {
+  id?: number
+  document_id: number
+  page: number
+  file_id: number
+  width: number
+  height: number
+}
+
 export interface EntriesRow {
   id: number
   uid: string
@@ -1530,6 +1548,7 @@ declare module 'knex/types/tables' {
     district_neighbours: Knex.CompositeTableType<DistrictNeighboursRow, Given<DistrictNeighboursInsert>, Partial<Given<DistrictNeighboursInsert>>>
     docket_items: Knex.CompositeTableType<DocketItemsRow, Given<DocketItemsInsert>, Partial<Given<DocketItemsInsert>>>
     documents: Knex.CompositeTableType<DocumentsRow, Given<DocumentsInsert>, Partial<Given<DocumentsInsert>>>
+    document_pages: Knex.CompositeTableType<DocumentPagesRow, Given<DocumentPagesInsert>, Partial<Given<DocumentPagesInsert>>>
     entries: Knex.CompositeTableType<EntriesRow, Given<EntriesInsert>, Partial<Given<EntriesInsert>>>
     entry_events: Knex.CompositeTableType<EntryEventsRow, Given<EntryEventsInsert>, Partial<Given<EntryEventsInsert>>>
     entry_people: Knex.CompositeTableType<EntryPeopleRow, Given<EntryPeopleInsert>, Partial<Given<EntryPeopleInsert>>>

@@ -3,6 +3,9 @@ import pino, { type Logger } from 'pino'
 import { openDatabase } from '../db/connection'
 import { readConfig, type HartrollConfig } from './config'
 import { systemClock, type Clock } from './clock'
+import { openPayments, type Payments } from './payments/provider'
+import { FileStorage } from './storage/files'
+import { openScanner, type Scanner } from './storage/scanner'
 import { settingsReader, type Settings } from './services/settings/read'
 
 /** What one registry (one database, one society) works with. Nothing of it lives at module level. */
@@ -11,6 +14,11 @@ export interface Registry {
   readonly db: Knex
   readonly clock: Clock
   readonly log: Logger
+  /** Null where no payments service is set up: then fees are booked by the office. */
+  readonly payments: Payments | null
+  readonly storage: FileStorage
+  /** Null where uploads are not scanned. */
+  readonly scanner: Scanner | null
   /** The society's own values (name, zone, currency …), read from the database, at most a few seconds old. */
   settings(): Promise<Settings>
   close(): Promise<void>
@@ -31,6 +39,9 @@ export function createRegistry(config: HartrollConfig, options: CompositionOptio
     db,
     clock: options.clock ?? systemClock,
     log,
+    payments: openPayments(config),
+    storage: new FileStorage(config),
+    scanner: openScanner(config.scannerUrl),
     settings: settingsReader(db),
     close: () => db.destroy(),
   }

@@ -1,3 +1,4 @@
+import { createHmac } from 'node:crypto'
 import { join, resolve } from 'node:path'
 
 /** Everything that the environment decides, checked once at the start. */
@@ -15,10 +16,19 @@ export interface HartrollConfig {
   /** Short id of this installation; it keeps cookies of two copies on one host apart. */
   readonly instance: string
   readonly smtpUrl: string | null
-  readonly stripe: { readonly secretKey: string, readonly webhookSecret: string, readonly apiBase: string | null } | null
+  readonly stripe: {
+    readonly secretKey: string
+    readonly webhookSecret: string
+    /** Where the service is, when it is not the real one. */
+    readonly apiBase: string | null
+    /** True in a demo without keys: the web serves a local stand-in of the service beside itself. */
+    readonly standIn: boolean
+  } | null
   readonly s3: { readonly endpoint: string, readonly bucket: string, readonly region: string, readonly accessKeyId: string, readonly secretAccessKey: string } | null
   /** Moves the clock and loosens limits for tests; refused in production. */
   readonly testing: boolean
+  /** Address of clamd, `tcp://host:port` or `unix:/path`; null where uploads are not scanned. */
+  readonly scannerUrl: string | null
 }
 
 /** A value of the environment that cannot be used; its message is one line for the person who started Hartroll. */
@@ -51,6 +61,13 @@ function required(env: Env, name: string, why: string): string {
   return value
 }
 
+/** Keys by which web and worker of one demo know their stand-in; they follow from the secret, so nothing has to be kept. */
+function standInKeys(secret: string, env: Env): HartrollConfig['stripe'] {
+  const derive = (what: string) => createHmac('sha256', secret).update(`payments stand-in ${what}`).digest('hex')
+  const host = !env.HOST || env.HOST === '0.0.0.0' || env.HOST === '::' ? '127.0.0.1' : env.HOST.includes(':') ? `[${env.HOST}]` : env.HOST
+  return { secretKey: `sk_test_${derive('key')}`, webhookSecret: `whsec_${derive('webhook')}`, apiBase: `http://${host}:${env.PORT ?? '3000'}`, standIn: true }
+}
+
 /**
  * Reads the environment of contract.md, "Running it".
  *
@@ -76,9 +93,10 @@ export function readConfig(env: Env): HartrollConfig {
     ? {
         secretKey: env.STRIPE_SECRET_KEY,
         webhookSecret: required(env, 'STRIPE_WEBHOOK_SECRET', 'messages of the payments service are checked with it'),
-        apiBase: env.STRIPE_API_BASE ?? null,
+        apiBase: url(env, 'STRIPE_API_BASE', ['http:', 'https:'])?.origin ?? null,
+        standIn: false,
       }
-    : null
+    : mode === 'demo' ? standInKeys(secret, env) : null
   const s3 = env.DOCUMENTS_S3_BUCKET
     ? {
         bucket: env.DOCUMENTS_S3_BUCKET,
@@ -102,6 +120,7 @@ export function readConfig(env: Env): HartrollConfig {
     stripe,
     s3,
     testing,
+    scannerUrl: url(env, 'HARTROLL_SCANNER', ['tcp:', 'unix:'])?.href ?? null,
   }
 }
 

@@ -12,6 +12,7 @@ import { smtpTransport, type MailTransport } from './mail/transport'
 import { dropHeartbeat, noteHeartbeat } from './repositories/heartbeats'
 import { planRounds } from './services/jobs/schedule'
 import { workOneJob } from './services/jobs/work'
+import { runPaymentCommands } from './services/payments/commands'
 import { deliverNotices } from './services/notices/deliver'
 import { testClock } from './utils/testClock'
 
@@ -63,6 +64,7 @@ async function main(): Promise<void> {
       await planRounds(registry)
       return false
     }),
+    loop(registry, stop, 'payments', IDLE_MS, () => runPaymentCommands(registry, stop)),
     loop(registry, stop, 'jobs', IDLE_MS, () => workOneJob(registry, stop)),
     ...(mail
       ? [loop(registry, stop, 'notices', IDLE_MS, async () => {

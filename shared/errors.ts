@@ -34,6 +34,15 @@ export const ERRORS = {
   frozen_fact: 422,
   sheet_signed: 409,
   sitting_closed: 409,
+  nothing_due: 409,
+  // files
+  file_too_large: 413,
+  file_kind: 415,
+  file_unreadable: 422,
+  file_infected: 422,
+  quota_entry: 409,
+  quota_person: 429,
+  file_settled: 409,
   // the house itself
   internal: 500,
   database_away: 503,

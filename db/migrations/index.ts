@@ -75,6 +75,7 @@ import * as m0072_erasures from './0072_erasures'
 import * as m0073_worker_heartbeats from './0073_worker_heartbeats'
 import * as m0075_workflow_versions_limits from './0075_workflow_versions_limits'
 import * as m0076_sheets_measurements_hash from './0076_sheets_measurements_hash'
+import * as m0080_document_pages from './0080_document_pages'
 import * as m0081_records_public_orders from './0081_records_public_orders'
 
 export type { Migration }
@@ -156,5 +157,6 @@ export const MIGRATIONS: readonly (readonly [name: string, migration: Migration]
   ['0073_worker_heartbeats', m0073_worker_heartbeats],
   ['0075_workflow_versions_limits', m0075_workflow_versions_limits],
   ['0076_sheets_measurements_hash', m0076_sheets_measurements_hash],
+  ['0080_document_pages', m0080_document_pages],
   ['0081_records_public_orders', m0081_records_public_orders],
 ]

@@ -1,6 +1,7 @@
 import type { Registry } from '../../composition'
 import { runClock } from '../entries/clock'
 import { forgetSpent } from '../../repositories/sweeping'
+import { sweepFiles } from '../documents/sweep'
 
 interface Task {
   readonly everyMinutes: number
@@ -11,6 +12,7 @@ interface Task {
 /** What happens by the clock alone. A round begins once, however many workers there are. */
 export const TASKS: Readonly<Record<string, Task>> = {
   clock: { everyMinutes: 10, run: runClock },
+  sweep_files: { everyMinutes: 24 * 60, run: sweepFiles },
   forget_spent: { everyMinutes: 60, run: registry => forgetSpent(registry.db, registry.clock.now()) },
 }
 

@@ -2,9 +2,8 @@ import { parseSqlTime } from '../../../../db/time'
 import { addDays, daysBetween } from '../../../../shared/domain/dates'
 import { standingOf } from '../../../../shared/domain/ranking'
 import { dayIn } from '../../../clock'
-import { insertRefundCommand } from '../../../repositories/refunds'
 import { listCounts } from '../../../repositories/records'
-import { sumLedger } from '../../../repositories/catalogue'
+import { queueRefund } from '../../payments/refund'
 import { markRecord, publishEntry, relistEntry, unlistEntry } from '../../listing/publish'
 import { sayNet } from '../say'
 import { amendEntry } from '../amend'
@@ -34,14 +33,10 @@ export const amendRecord: Effect = async (effect) => {
   Object.assign(effect.texts, amended.texts)
 }
 
-/** Asks the payments service for the money back; how much is left to give back is found when it is asked. */
+/** Asks for the money back and closes a page of the payments service that is still open. */
 export const refundFee: Effect = async ({ trx, context, moment, args }) => {
-  const { settled } = await sumLedger(trx, context.entry.id)
-  if (settled <= 0) return
-  await insertRefundCommand(trx, {
-    entry_id: context.entry.id, idempotency_key: `refund:${context.entry.uid}`, payload: JSON.stringify({ reason: 'withdrawn' }), run_at: moment.at, created_at: moment.at,
-  })
-  args.refundAsked = settled
+  const asked = await queueRefund(trx, context.entry.id, 'withdrawn', moment)
+  if (asked > 0) args.refundAsked = asked
 }
 
 /** Clocks go on from where they stood: the running term ends later by the days of the hold. */

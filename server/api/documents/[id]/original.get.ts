@@ -1,0 +1,10 @@
+import { documentParams } from '#shared/schemas/documents'
+import { readFile } from '../../../services/documents/read'
+import { defineRoute } from '../../../utils/defineRoute'
+import { sendFile } from '../../../utils/sendFile'
+
+export default defineRoute({
+  access: { note: 'whoever may see the entry, without a stake' },
+  params: documentParams,
+  handler: async ({ event, registry, actor, params }) => sendFile(event, await readFile(registry, actor, params.id, 'original', 1)),
+})

@@ -1,0 +1,61 @@
+import type { Knex } from 'knex'
+import { lockEntryById } from '../../repositories/entries'
+import * as payments from '../../repositories/payments'
+import { appendEvent } from '../events/append'
+import { newUid, type Moment } from '../moment'
+import { feeStanding } from './feeStanding'
+import { refundCharge, type RefundReason } from './refund'
+import { tellOfMoney } from './tell'
+
+export interface MoneyMoved {
+  /** the provider's id of the movement; written once, however often we hear of it */
+  readonly providerId: string
+  readonly amountMinor: number
+  readonly currency: string
+  readonly checkoutId: number | null
+  readonly reason?: string
+}
+
+/** States in which a fee serves nothing any more, so that money which arrives goes back. */
+const ENDED = ['withdrawn', 'declined', 'struck']
+
+/**
+ * Books money that came. What arrives for an entry that has ended, or a second time, is asked back in the same
+ * transaction.
+ */
+export async function noteCharge(trx: Knex.Transaction, entryId: number, charge: MoneyMoved, moment: Moment): Promise<void> {
+  const entry = await lockEntryById(trx, entryId)
+  if (!entry || await payments.findLedgerByProvider(trx, charge.providerId)) return
+  const before = await feeStanding(trx, entry, moment.today)
+  await payments.insertLedger(trx, {
+    uid: newUid(moment.now), entry_id: entryId, kind: 'charge', amount_minor: charge.amountMinor, currency: charge.currency,
+    provider_id: charge.providerId, checkout_id: charge.checkoutId, at: moment.at,
+  })
+  await appendEvent(trx, entry, { kind: 'fee_paid', actor: null, args: { amount: charge.amountMinor, currency: charge.currency } }, moment)
+  const needless: RefundReason | null = ENDED.includes(entry.state) ? 'arrived_after_end' : before.open === 0 ? 'paid_twice' : null
+  await tellOfMoney(trx, entry, 'fee_paid', charge.amountMinor, charge.currency, moment)
+  if (needless) await refundCharge(trx, (await payments.findLedgerByProvider(trx, charge.providerId))!, needless, moment)
+}
+
+/** Books money that went back, once, however we learned of it. */
+export async function noteRefund(trx: Knex.Transaction, entryId: number, refund: MoneyMoved, moment: Moment): Promise<void> {
+  const entry = await lockEntryById(trx, entryId)
+  if (!entry || await payments.findLedgerByProvider(trx, refund.providerId)) return
+  await payments.insertLedger(trx, {
+    uid: newUid(moment.now), entry_id: entryId, kind: 'refund', amount_minor: refund.amountMinor, currency: refund.currency,
+    provider_id: refund.providerId, checkout_id: refund.checkoutId, reason: refund.reason ?? null, at: moment.at,
+  })
+  await appendEvent(trx, entry, { kind: 'fee_refunded', actor: null, args: { amount: refund.amountMinor, currency: refund.currency } }, moment)
+  await tellOfMoney(trx, entry, 'fee_refunded', refund.amountMinor, refund.currency, moment)
+}
+
+/** Books money that a payer's bank took back. */
+export async function noteDispute(trx: Knex.Transaction, entryId: number, dispute: MoneyMoved, moment: Moment): Promise<void> {
+  const entry = await lockEntryById(trx, entryId)
+  if (!entry || await payments.findLedgerByProvider(trx, dispute.providerId)) return
+  await payments.insertLedger(trx, {
+    uid: newUid(moment.now), entry_id: entryId, kind: 'dispute', amount_minor: dispute.amountMinor, currency: dispute.currency,
+    provider_id: dispute.providerId, checkout_id: dispute.checkoutId, at: moment.at,
+  })
+  await appendEvent(trx, entry, { kind: 'fee_disputed', actor: null, args: { amount: dispute.amountMinor, currency: dispute.currency } }, moment)
+}
