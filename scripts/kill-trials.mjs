@@ -55,6 +55,7 @@ process.exit(failed ? 1 : 0)
 /** @returns {Promise<boolean>} whether all is well */
 async function trial() {
   const databaseUrl = running().databaseUrl
+  const loads = [await entries(url), await votes(url, databaseUrl)]
   const stopping = new AbortController()
   const working = loads.map(load => load.work(stopping.signal))
   let slowest = 0

@@ -1,3 +1,5 @@
+import { sleep } from '../lib/processes.mjs'
+
 /**
  * @typedef {{ status: number, body: any, headers: Headers }} Answer
  * @typedef {object} Load
@@ -46,15 +48,22 @@ export class Client {
     return { status: answer.status, headers: answer.headers, body: /json/.test(answer.headers.get('content-type') ?? '') ? JSON.parse(text) : text }
   }
 
-  /** @param {string} account of the demo, such as `judge1` */
+  /**
+   * Signs in, waiting where too many have tried at once.
+   *
+   * @param {string} account of the demo, such as `judge1`
+   */
   async signIn(account) {
-    const { body: { csrfToken } } = await this.send('GET', '/api/auth/csrf')
-    const answer = await this.send('POST', '/api/auth/callback/credentials', {
-      form: { csrfToken, email: `${account}@ochrebasin.example`, password: PASSWORD, json: 'true' },
-    })
-    const me = await this.send('GET', '/api/me')
-    if (me.status !== 200 || me.body.email !== `${account}@ochrebasin.example`) throw new Error(`${account} could not sign in: ${answer.status} ${JSON.stringify(answer.body)} ${JSON.stringify(me.body)}`)
-    return this
+    for (let attempt = 1; ; attempt++) {
+      const { body: { csrfToken } } = await this.send('GET', '/api/auth/csrf')
+      const answer = await this.send('POST', '/api/auth/callback/credentials', {
+        form: { csrfToken, email: `${account}@ochrebasin.example`, password: PASSWORD, json: 'true' },
+      })
+      const me = await this.send('GET', '/api/me')
+      if (me.status === 200 && me.body.email === `${account}@ochrebasin.example`) return this
+      if (answer.status !== 429 || attempt === 10) throw new Error(`${account} could not sign in: ${answer.status} ${JSON.stringify(answer.body)}`)
+      await sleep(1_000 * attempt)
+    }
   }
 }
 

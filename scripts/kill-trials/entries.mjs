@@ -11,7 +11,8 @@ import { sleep } from '../lib/processes.mjs'
  * @returns {Promise<import('./client.mjs').Load>}
  */
 export async function entries(url) {
-  const clients = await Promise.all(['entrant', 'shop'].map(account => new Client(url).signIn(account)))
+  const clients = []
+  for (const account of ['entrant', 'shop']) clients.push(await new Client(url).signIn(account))
   /** @type {Map<string, Expected>} */
   const expected = new Map()
   let answered = 0

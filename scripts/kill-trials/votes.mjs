@@ -17,7 +17,8 @@ export async function votes(url, databaseUrl) {
   const [rows] = await database.query('SELECT s.uid AS sitting, d.uid AS item FROM docket_items d JOIN sittings s ON s.id = d.sitting_id WHERE s.state = \'open\' AND d.state = \'open\' AND d.kind = \'entry\' ORDER BY d.id')
   await database.end()
   const items = /** @type {{ sitting: string, item: string }[]} */ (rows)
-  const clients = await Promise.all(JUDGES.map(async judge => ({ judge, client: await new Client(url).signIn(judge) })))
+  const clients = []
+  for (const judge of JUDGES) clients.push({ judge, client: await new Client(url).signIn(judge) })
   /** @type {Map<string, Set<string>>} judge and item to the votes it may be */
   const expected = new Map()
   let answered = 0
