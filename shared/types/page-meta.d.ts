@@ -8,6 +8,8 @@ declare module '#app' {
     access?: PageAccess
     /** `desk`: the page speaks the desk's words although it stands in another layout. */
     texts?: 'desk'
+    /** The desk gives the page the whole width: papers stand beside the data. */
+    wide?: boolean
   }
 }
 
