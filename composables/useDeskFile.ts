@@ -2,8 +2,9 @@ import type { DeskFile, FileViewer } from '#shared/schemas/file'
 
 /** A file of the desk, with what to do when somebody else changed it meanwhile. */
 export async function useDeskFile(id: string, as: FileViewer) {
-  const asked = await useFetch<DeskFile>(`/api/desk/files/${id}`, { query: { as }, key: `desk-file-${as}-${id}` })
+  // Before the first await: behind it the page's own context is gone.
   const { t } = useI18n()
+  const asked = await useFetch<DeskFile>(`/api/desk/files/${id}`, { query: { as }, key: `desk-file-${as}-${id}` })
   /** Said when the file was found changed; goes with the next act. */
   const changed = ref<string | null>(null)
   const done = ref<string | null>(null)

@@ -11,5 +11,10 @@ export default defineNitroPlugin((nitro) => {
   nitro.hooks.hook('request', (event) => {
     event.context.registry = registry
   })
+  // Routes tell and log their own failures; what remains are pages that could not be rendered.
+  nitro.hooks.hook('error', (error, { event }) => {
+    const status = (error as { statusCode?: number }).statusCode ?? 500
+    if (status >= 500) registry.log.error({ err: error.cause ?? error, path: event?.path, requestId: event?.context.requestId }, 'a page failed')
+  })
   nitro.hooks.hook('close', () => registry.close())
 })
