@@ -65,6 +65,8 @@ async function start() {
   if (wishes.databaseUrl === null && !hasMariadb()) await installMariadbServer()
 
   const environment = childEnvironment(wishes, instance)
+  // Before anything is made: the address of a database of our own is not known yet, and always right.
+  await checkConfiguration({ ...environment, DATABASE_URL: wishes.databaseUrl ?? 'mysql://hartroll@127.0.0.1/hartroll', HARTROLL_OWN_DATABASE: wishes.databaseUrl === null ? '1' : undefined })
   if (wishes.databaseUrl !== null) {
     await checkForeignDatabase(wishes.databaseUrl)
   }
@@ -74,7 +76,6 @@ async function start() {
     environment.HARTROLL_OWN_DATABASE = '1'
   }
   if (stopping) return
-  await checkConfiguration(environment)
   await ensureBuild()
   if (stopping) return
   await prepareDatabase(wishes, instance, environment)

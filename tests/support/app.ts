@@ -13,6 +13,7 @@ import { createRegistry, type Registry } from '../../server/composition'
 import { readConfig } from '../../server/config'
 import type { Role } from '../../shared/domain/access/roles'
 import { takeDatabase, type TestDatabase } from './database'
+import { openLine, type DatabaseLine } from './line'
 import { makePerson, makeSession, type Person, type PersonWishes } from './people'
 
 const ROOT = fileURLToPath(new URL('../..', import.meta.url))
@@ -51,6 +52,8 @@ export interface App {
   signIn(person: Person): Promise<Client & { readonly person: Person }>
   /** What the server has written to its log so far. */
   log(): string
+  /** The line to the database, where one was asked for: `cut` as if the database's machine were gone, `mend` as if it were back. */
+  readonly line: DatabaseLine
   /** Environment of the server, for starting a worker or a script beside it. */
   readonly env: Readonly<Record<string, string>>
 }
@@ -62,6 +65,8 @@ export interface AppOptions {
   readonly env?: Readonly<Record<string, string>>
   /** Starts a worker process too. */
   readonly worker?: boolean
+  /** Puts a line between server and database that can be cut. */
+  readonly cuttable?: boolean
 }
 
 /**
@@ -89,7 +94,7 @@ interface RunningApp {
 }
 
 /** As `useApp`, for scripts and tests that start and stop servers themselves. */
-export async function startApp({ at = '2026-03-02T15:00:00.000Z', env: more = {}, worker = false }: AppOptions = {}): Promise<RunningApp> {
+export async function startApp({ at = '2026-03-02T15:00:00.000Z', env: more = {}, worker = false, cuttable = false }: AppOptions = {}): Promise<RunningApp> {
   const folder = mkdtempSync(path.join(os.tmpdir(), 'hartroll-app-'))
   const database = await takeDatabase()
   const undo: (() => Promise<unknown>)[] = [async () => rmSync(folder, { recursive: true, force: true }), () => database.release()]
@@ -106,12 +111,14 @@ export async function startApp({ at = '2026-03-02T15:00:00.000Z', env: more = {}
     clock.set(at)
     const port = await freePort()
     const url = `http://127.0.0.1:${port}`
+    const line = cuttable ? await openLine(database.url) : null
+    if (line) undo.push(() => line.close())
     const env: Record<string, string> = {
       PATH: process.env.PATH ?? '',
       NODE_ENV: 'production',
       HOST: '127.0.0.1',
       PORT: String(port),
-      DATABASE_URL: database.url,
+      DATABASE_URL: line?.url ?? database.url,
       HARTROLL_OWN_DATABASE: '1',
       HARTROLL_MODE: 'demo',
       HARTROLL_TESTING: '1',
@@ -132,7 +139,7 @@ export async function startApp({ at = '2026-03-02T15:00:00.000Z', env: more = {}
       undo.push(() => end(beside))
     }
     await answering(url, web, logFile)
-    const registry = createRegistry(readConfig(env), { clock })
+    const registry = createRegistry(readConfig({ ...env, DATABASE_URL: database.url }), { clock })
     undo.push(() => registry.close())
 
     const client = (cookie: string, person: Person | null): Client => ({
@@ -154,6 +161,10 @@ export async function startApp({ at = '2026-03-02T15:00:00.000Z', env: more = {}
       clock,
       registry,
       env,
+      get line() {
+        if (!line) throw new Error('Ask for it: useApp({ cuttable: true })')
+        return line
+      },
       visitor: client('', null),
       signIn,
       signInAs: async (roles, wishes) => signIn(await makePerson(database.db, clock.now(), typeof roles === 'string' ? [roles] : roles, wishes)),
