@@ -51,8 +51,9 @@ function draftOf(entry: EntryAnswer): FactsDraft {
   }
 }
 
-/** What of a value decides whether it was changed: a person's key is the form's own. */
-const plain = (value: unknown) => JSON.stringify(Array.isArray(value) ? (value as PersonDraft[]).map(({ key: _, id: __, ...rest }) => rest) : value)
+/** What of a value decides whether it was changed: a person's key is the form's own, and a space that is just typed is no change. */
+const plain = (value: unknown) => JSON.stringify(Array.isArray(value) ? (value as PersonDraft[]).map(({ key: _, id: __, ...rest }) => rest) : value,
+  (_, part: unknown) => typeof part === 'string' ? part.trim() : part)
 const copy = <T>(value: T): T => JSON.parse(JSON.stringify(value)) as T
 
 function sent(name: FactName, values: FactsDraft): unknown {
@@ -100,7 +101,10 @@ export function useEntryFacts(entry: Ref<EntryAnswer>) {
     const before = [...values.people]
     const known = (one: PersonDraft) => before.find(other => other.id === one.id) ?? before.find(other => !other.id && other.part === one.part && other.name.trim() === one.name)
     const blank = before.filter(one => !one.id && one.name.trim() === '')
-    values.people = [...people.map(one => ({ ...copy(one), key: known(one)?.key ?? one.key })), ...blank]
+    values.people = [...people.map((one) => {
+      const here = known(one)
+      return here && plain([here]) === plain([one]) ? { ...copy(here), id: one.id } : { ...copy(one), key: here?.key ?? one.key }
+    }), ...blank]
   }
   watch(entry, (next, last) => { if (next.version !== last.version) takeOver(next, dirty()) })
 
