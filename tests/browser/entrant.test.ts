@@ -15,7 +15,7 @@ let entrant: Client
 let photograph: Buffer
 
 beforeAll(async () => {
-  scene = await makeScene(app.registry)
+  scene = await makeScene(Object.assign(app.registry, { at: app.clock.set, pass: app.clock.pass }))
   const { entrant: actor } = scene.cast
   entrant = await app.signIn({ userId: actor.userId, uid: actor.uid, name: actor.name, email: actor.email, roles: [] })
   photograph = await sharp({ create: { width: 640, height: 480, channels: 3, background: '#8a6a3a' } }).jpeg().toBuffer()
