@@ -6,6 +6,7 @@ import { demoState, seedDemo } from '../seeds/demo'
 import { seedReference } from '../seeds/reference'
 import { systemClock } from '../server/clock'
 import type { HartrollConfig } from '../server/config'
+import { FileStorage } from '../server/storage/files'
 
 /** Between two lines that say how far it is. */
 const QUIET_MS = 1_500
@@ -27,11 +28,12 @@ async function emptyOut(db: Knex): Promise<void> {
   await db.raw('CREATE DATABASE ?? CHARACTER SET utf8mb4 COLLATE utf8mb4_uca1400_nopad_ai_ci', row!.name)
 }
 
-async function fill(db: Knex, say: (line: string) => void): Promise<void> {
+async function fill(db: Knex, files: FileStorage, say: (line: string) => void): Promise<void> {
   const began = Date.now()
   let told = 0
   await seedDemo(db, {
     now: systemClock.now(),
+    files,
     progress: (text) => {
       if (Date.now() - told < QUIET_MS) return
       told = Date.now()
@@ -56,5 +58,5 @@ export async function fillWithDemo(config: HartrollConfig, say: (line: string) =
       await seedReference(db, systemClock.now())
     })
   }
-  await withDatabase(config, db => fill(db, say))
+  await withDatabase(config, db => fill(db, new FileStorage(config), say))
 }

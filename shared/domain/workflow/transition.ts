@@ -151,13 +151,16 @@ function asksPersonFor(guard: GuardName, { performer }: GuardContext): boolean {
   return performer.kind === 'person' && (guard === 'ground_and_reason' || guard === 'ground_fits' || guard === 'reason_given')
 }
 
+/** Where one of these fails there is nothing to wait for: the act belongs to another turn, or to an entry on hold. */
+const NOT_THIS_TIME: readonly (GuardName | 'comment_given')[] = ['own_turn', 'withdrawal_agreed', 'on_hold']
+
 /** What a performer may do with an entry in its state, with the reason where something stands in the way. */
 export function nextActs(rows: readonly TransitionRow[], facts: EntryFacts, performer: Performer, around: Surroundings): NextAct[] {
   return rows.filter(row => leaves(row, facts.state)).flatMap((row) => {
     const context = contextOf(row, facts, performer, { transition: row.code }, around)
     if (context.parties.size === 0) return []
     const act = nextAct(row, context)
-    return act.failed.some(failure => failure.guard === 'own_turn' || failure.guard === 'withdrawal_agreed') ? [] : [act]
+    return act.failed.some(failure => NOT_THIS_TIME.includes(failure.guard)) ? [] : [act]
   })
 }
 
