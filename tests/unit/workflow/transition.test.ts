@@ -135,7 +135,8 @@ describe('what may be done next', () => {
 
   test('what is another\'s turn, or takes the chair, is not offered', () => {
     expect(next({ state: 'at_panel' }, PERFORMERS.reviewer).map(act => act.transition)).not.toContain('recertify')
-    expect(next({ state: 'at_panel' }, PERFORMERS.chair).map(act => act.transition)).toEqual(['recertify', 'order_remeasure', 'hold', 'lift_hold'])
+    expect(next({ state: 'at_panel' }, PERFORMERS.chair).map(act => act.transition)).toEqual(['recertify', 'order_remeasure', 'hold'])
+    expect(next({ state: 'at_panel', onHold: true }, PERFORMERS.chair).map(act => act.transition)).toContain('lift_hold')
     expect(next({ state: 'draft', onHold: true }).map(act => act.transition)).not.toContain('withdraw')
   })
 })
