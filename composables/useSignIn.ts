@@ -1,7 +1,7 @@
 /** How a try to sign in ended; `retryAfter` in seconds comes with `wait`. */
-export type SignInOutcome =
-  | { readonly kind: 'in' | 'failed' | 'unconfirmed' | 'code' | 'codeWrong' | 'expired' | 'offline' }
-  | { readonly kind: 'wait', readonly retryAfter: number }
+export type SignInOutcome
+  = | { readonly kind: 'in' | 'failed' | 'unconfirmed' | 'code' | 'codeWrong' | 'expired' | 'offline' }
+    | { readonly kind: 'wait', readonly retryAfter: number }
 
 const REFUSALS: Readonly<Record<string, 'failed' | 'unconfirmed' | 'code' | 'codeWrong'>> = {
   sign_in_failed: 'failed', CredentialsSignin: 'failed', email_unconfirmed: 'unconfirmed', second_factor_required: 'code', second_factor_wrong: 'codeWrong',

@@ -80,14 +80,14 @@ const PLANS: Readonly<Record<string, Plan>> = {
   'mule-deer-nontypical': { ...mule, abnormal: { mean: 8, inches: 3, share: 0.6 } },
   'elk-typical': { ...elk, abnormal: { mean: 0.2, inches: 2.5, share: 0.5 } },
   'elk-nontypical': { ...elk, abnormal: { mean: 3.5, inches: 6, share: 0.6 } },
-  'moose': {
+  moose: {
     perInch: 8,
     single: { greatestSpread: apart(44, 0.08) },
     paired: { palmWidth: long(9.6, 0.14, 0.05), palmLength: long(29.5, 0.08, 0.035), beamCircumference: round(6.9) },
     counts: { normalPoints: { mean: 9 } },
     abnormalCount: true,
   },
-  'pronghorn': {
+  pronghorn: {
     perInch: 8,
     single: { insideSpread: apart(10.5, 0.2), tipToTip: apart(6.5, 0.4) },
     paired: { hornLength: long(13.9), baseCircumference: round(6), firstQuarter: round(5.9), secondQuarter: round(3.7), thirdQuarter: round(2.5), prongLength: point(4.9) },
@@ -105,7 +105,7 @@ const PLANS: Readonly<Record<string, Plan>> = {
     paired: { hornLength: long(9, 0.06, 0.015), baseCircumference: round(5.3), firstQuarter: round(4.4), secondQuarter: round(3.05), thirdQuarter: round(1.9) },
     falling: ['baseCircumference', 'firstQuarter', 'secondQuarter', 'thirdQuarter'],
   },
-  'bison': {
+  bison: {
     perInch: 8,
     single: { greatestSpread: apart(26, 0.1), tipToTip: apart(21, 0.15) },
     paired: { hornLength: long(15.4, 0.07, 0.02), baseCircumference: round(13), firstQuarter: round(11.2), secondQuarter: round(8.8), thirdQuarter: round(5.6) },
@@ -113,7 +113,7 @@ const PLANS: Readonly<Record<string, Plan>> = {
   },
   'black-bear': { perInch: 16, single: { skullLength: apart(11.4, 0.02), skullWidth: apart(7, 0.03) }, paired: {} },
   'grizzly-bear': { perInch: 16, single: { skullLength: apart(13.1, 0.02), skullWidth: apart(7.9, 0.03) }, paired: {} },
-  'cougar': { perInch: 16, single: { skullLength: apart(8, 0.02), skullWidth: apart(5.5, 0.02) }, paired: {} },
+  cougar: { perInch: 16, single: { skullLength: apart(8, 0.02), skullWidth: apart(5.5, 0.02) }, paired: {} },
 }
 
 /** What is particular to one animal; its size is chosen afterwards. */
@@ -234,7 +234,7 @@ export function growHead(category: string, target: number, random: Random, netOf
 /** The same head dried, or measured by other hands: every reading off by a step at most, here and there. */
 export function measuredAgain(head: Head, random: Random): Head {
   const again = (reading: Reading): Reading =>
-    reading === 'absent' ? reading : Math.max(1, reading + Number(random.weighted({ '0': 7, '-1': 3, '1': 1 })))
+    reading === 'absent' ? reading : Math.max(1, reading + Number(random.weighted({ 0: 7, '-1': 3, 1: 1 })))
   const side = (readings: Record<string, Reading>) =>
     Object.fromEntries(Object.entries(readings).map(([line, reading]) => [line, /oints$/.test(line) ? reading : again(reading)]))
   const single = Object.fromEntries(Object.entries(head.single)

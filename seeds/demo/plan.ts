@@ -47,17 +47,17 @@ export function scorerFor(category: DemoClass): Scorer {
 
 /** Months and days between which a species is hunted, by common practice of a highland region (no source). */
 const SEASONS: Readonly<Record<string, readonly (readonly [from: string, to: string])[]>> = {
-  'whitetail': [['09-15', '12-10']],
+  whitetail: [['09-15', '12-10']],
   'mule-deer': [['09-10', '11-30']],
-  'elk': [['09-01', '11-28']],
-  'moose': [['09-12', '10-31']],
-  'pronghorn': [['08-20', '10-20']],
+  elk: [['09-01', '11-28']],
+  moose: [['09-12', '10-31']],
+  pronghorn: [['08-20', '10-20']],
   'bighorn-sheep': [['08-28', '10-15']],
   'mountain-goat': [['09-01', '11-10']],
-  'bison': [['10-01', '12-31']],
+  bison: [['10-01', '12-31']],
   'black-bear': [['04-15', '06-10'], ['09-01', '10-31']],
   'grizzly-bear': [['04-20', '05-31'], ['09-10', '10-20']],
-  'cougar': [['01-02', '02-25'], ['12-01', '12-30']],
+  cougar: [['01-02', '02-25'], ['12-01', '12-30']],
 }
 
 /** Few years stand apart: a war that kept people away, and winters after which little had grown. */
@@ -86,7 +86,7 @@ const day = (text: string): InexactDate => parseInexactDate(text)!
 
 /** Mean excess of a record over its minimum, as a share; skulls lie closer together than antlers. */
 const EXCESS: Readonly<Partial<Record<DemoClass, number>>> = {
-  'black-bear': 0.024, 'grizzly-bear': 0.03, 'cougar': 0.026, 'pronghorn': 0.045, 'mountain-goat': 0.042, 'bison': 0.06,
+  'black-bear': 0.024, 'grizzly-bear': 0.03, cougar: 0.026, pronghorn: 0.045, 'mountain-goat': 0.042, bison: 0.06,
   'mule-deer-nontypical': 0.07, 'whitetail-nontypical': 0.07,
 }
 

@@ -141,4 +141,3 @@ export const SCENES: readonly Scene[] = [
   { category: 'moose', district: 'elder-reach', owner: 'other', begun: 70, taken: 420, tell: (story, p) => story.begin().askMeasurer(64, p.near).certify(50, p.near).withdraw(41) },
   { category: 'black-bear', district: 'skarncliff', owner: 'other', begun: 44, taken: 100, tell: story => story.begin().withdraw(30) },
 ]
-

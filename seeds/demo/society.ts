@@ -45,17 +45,17 @@ export const NEIGHBOURS: readonly (readonly [DistrictCode, DistrictCode])[] = [
  * lets no class of that species in.
  */
 export const RANGES = {
-  'mule-deer': { 'alderfall': 6, 'brackwater': 4, 'coldiron': 9, 'elder-reach': 10, 'fennickshaw': 7, 'hollowmarch': 8, 'juniper-fork': 14, 'kestrelden': 9, 'larkmoor': 6, 'otterstone': 7, 'quillan-flats': 5, 'skarncliff': 8, 'thornwether': 4, 'varrowmere': 3 },
-  'whitetail': { 'alderfall': 5, 'brackwater': 14, 'coldiron': 2, 'fennickshaw': 3, 'hollowmarch': 9, 'juniper-fork': 4, 'larkmoor': 10, 'otterstone': 8, 'quillan-flats': 12, 'thornwether': 9, 'varrowmere': 13 },
-  'elk': { 'alderfall': 9, 'brackwater': 3, 'coldiron': 12, 'elder-reach': 14, 'fennickshaw': 10, 'hollowmarch': 7, 'juniper-fork': 6, 'kestrelden': 11, 'larkmoor': 3, 'otterstone': 3, 'skarncliff': 12, 'thornwether': 6, 'varrowmere': 2 },
-  'moose': { 'alderfall': 10, 'brackwater': 8, 'coldiron': 6, 'elder-reach': 7, 'fennickshaw': 3, 'hollowmarch': 6, 'skarncliff': 5, 'varrowmere': 12 },
-  'pronghorn': { 'hollowmarch': 4, 'juniper-fork': 9, 'kestrelden': 3, 'larkmoor': 12, 'otterstone': 10, 'quillan-flats': 18, 'thornwether': 8, 'varrowmere': 2 },
-  'bighorn-sheep': { 'alderfall': 3, 'coldiron': 7, 'elder-reach': 10, 'fennickshaw': 5, 'kestrelden': 4, 'skarncliff': 14 },
-  'mountain-goat': { 'alderfall': 4, 'coldiron': 6, 'elder-reach': 8, 'fennickshaw': 3, 'skarncliff': 12 },
-  'bison': { 'hollowmarch': 4, 'larkmoor': 3, 'otterstone': 5, 'quillan-flats': 6 },
-  'black-bear': { 'alderfall': 12, 'brackwater': 9, 'coldiron': 10, 'elder-reach': 8, 'fennickshaw': 8, 'hollowmarch': 5, 'juniper-fork': 3, 'kestrelden': 6, 'larkmoor': 2, 'skarncliff': 9, 'thornwether': 5, 'varrowmere': 7 },
-  'grizzly-bear': { 'alderfall': 6, 'coldiron': 4, 'elder-reach': 5, 'skarncliff': 8 },
-  'cougar': { 'alderfall': 5, 'brackwater': 3, 'coldiron': 9, 'elder-reach': 9, 'fennickshaw': 8, 'hollowmarch': 4, 'juniper-fork': 9, 'kestrelden': 10, 'larkmoor': 4, 'otterstone': 3, 'skarncliff': 10, 'thornwether': 6, 'varrowmere': 2 },
+  'mule-deer': { alderfall: 6, brackwater: 4, coldiron: 9, 'elder-reach': 10, fennickshaw: 7, hollowmarch: 8, 'juniper-fork': 14, kestrelden: 9, larkmoor: 6, otterstone: 7, 'quillan-flats': 5, skarncliff: 8, thornwether: 4, varrowmere: 3 },
+  whitetail: { alderfall: 5, brackwater: 14, coldiron: 2, fennickshaw: 3, hollowmarch: 9, 'juniper-fork': 4, larkmoor: 10, otterstone: 8, 'quillan-flats': 12, thornwether: 9, varrowmere: 13 },
+  elk: { alderfall: 9, brackwater: 3, coldiron: 12, 'elder-reach': 14, fennickshaw: 10, hollowmarch: 7, 'juniper-fork': 6, kestrelden: 11, larkmoor: 3, otterstone: 3, skarncliff: 12, thornwether: 6, varrowmere: 2 },
+  moose: { alderfall: 10, brackwater: 8, coldiron: 6, 'elder-reach': 7, fennickshaw: 3, hollowmarch: 6, skarncliff: 5, varrowmere: 12 },
+  pronghorn: { hollowmarch: 4, 'juniper-fork': 9, kestrelden: 3, larkmoor: 12, otterstone: 10, 'quillan-flats': 18, thornwether: 8, varrowmere: 2 },
+  'bighorn-sheep': { alderfall: 3, coldiron: 7, 'elder-reach': 10, fennickshaw: 5, kestrelden: 4, skarncliff: 14 },
+  'mountain-goat': { alderfall: 4, coldiron: 6, 'elder-reach': 8, fennickshaw: 3, skarncliff: 12 },
+  bison: { hollowmarch: 4, larkmoor: 3, otterstone: 5, 'quillan-flats': 6 },
+  'black-bear': { alderfall: 12, brackwater: 9, coldiron: 10, 'elder-reach': 8, fennickshaw: 8, hollowmarch: 5, 'juniper-fork': 3, kestrelden: 6, larkmoor: 2, skarncliff: 9, thornwether: 5, varrowmere: 7 },
+  'grizzly-bear': { alderfall: 6, coldiron: 4, 'elder-reach': 5, skarncliff: 8 },
+  cougar: { alderfall: 5, brackwater: 3, coldiron: 9, 'elder-reach': 9, fennickshaw: 8, hollowmarch: 4, 'juniper-fork': 9, kestrelden: 10, larkmoor: 4, otterstone: 3, skarncliff: 10, thornwether: 6, varrowmere: 2 },
 } as const satisfies Readonly<Record<string, Readonly<Partial<Record<DistrictCode, number>>>>>
 export type DemoSpecies = keyof typeof RANGES
 
@@ -83,14 +83,14 @@ export const OFFERED = {
   'whitetail-nontypical': { min16: 149 * 16, records: 330 },
   'elk-typical': { min16: 292 * 16, records: 920 },
   'elk-nontypical': { min16: 317 * 16, records: 160 },
-  'moose': { min16: 136 * 16, records: 420 },
-  'pronghorn': { min16: 71 * 16, records: 780 },
+  moose: { min16: 136 * 16, records: 420 },
+  pronghorn: { min16: 71 * 16, records: 780 },
   'bighorn-sheep': { min16: 152 * 16, records: 260 },
   'mountain-goat': { min16: 43 * 16 + 8, records: 210 },
-  'bison': { min16: 97 * 16, records: 120 },
+  bison: { min16: 97 * 16, records: 120 },
   'black-bear': { min16: 18 * 16 + 3, records: 640 },
   'grizzly-bear': { min16: 20 * 16 + 13, records: 80 },
-  'cougar': { min16: 13 * 16 + 5, records: 290 },
+  cougar: { min16: 13 * 16 + 5, records: 290 },
 } as const
 export type DemoClass = keyof typeof OFFERED
 

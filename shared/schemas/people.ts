@@ -1,5 +1,6 @@
 import { z } from 'zod'
-import { ROLES, STAFF_ROLES } from '#shared/domain/access/roles'
+import type { STAFF_ROLES } from '#shared/domain/access/roles'
+import { ROLES } from '#shared/domain/access/roles'
 
 /** Roles that a registrar gives and takes; every account is an entrant. */
 export const GIVEN_ROLES = ROLES.filter(role => role !== 'entrant')

@@ -47,12 +47,12 @@ describe('requests from another site', () => {
   })
 
   it('include a form post', async () => {
-    const answer = await app.visitor.post('/api/scores').set({ 'origin': 'https://elsewhere.example', 'content-type': 'application/x-www-form-urlencoded' }).send('category=cougar')
+    const answer = await app.visitor.post('/api/scores').set({ origin: 'https://elsewhere.example', 'content-type': 'application/x-www-form-urlencoded' }).send('category=cougar')
     expect(answer.status).toBe(403)
   })
 
   it('are told from our own pages and from programs', async () => {
-    expect((await app.visitor.post('/api/scores').set({ 'origin': app.url, 'sec-fetch-site': 'same-origin' }).send(body)).status).toBe(200)
+    expect((await app.visitor.post('/api/scores').set({ origin: app.url, 'sec-fetch-site': 'same-origin' }).send(body)).status).toBe(200)
     expect((await app.visitor.post('/api/scores').send(body)).status).toBe(200)
   })
 })

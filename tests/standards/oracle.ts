@@ -64,7 +64,7 @@ export const TABLE: Readonly<Record<string, Lines>> = {
   'roosevelt-elk': antlered(7, 'taken off', true),
   'tule-elk': antlered(7, 'taken off', true),
   /** A magazine's article on moose and field notes; the single abnormal count and the differences from memory. */
-  'moose': {
+  moose: {
     ...nothing,
     credits: [['greatestSpread', null]],
     compared: ['palmWidth', 'palmLength', 'beamCircumference'],
@@ -72,7 +72,7 @@ export const TABLE: Readonly<Record<string, Lines>> = {
     deductedCount: 'abnormalPointCount',
   },
   /** Two field-judging guides (one class); which lines are compared, and the half inch, from memory. */
-  'caribou': {
+  caribou: {
     ...nothing,
     credits: [['insideSpread', 'mainBeam']],
     compared: ['mainBeam', 'bezLength', 'rearPoint', 'secondTopPoint', 'longestTopPoint', 'topPalmWidth', ...hs],
@@ -83,21 +83,21 @@ export const TABLE: Readonly<Record<string, Lines>> = {
     projections: ['browLength', 'bezLength', 'rearPoint', 'secondTopPoint', 'longestTopPoint'],
     least: '1/2',
   },
-  'pronghorn': { ...nothing, compared: ['hornLength', ...quarters, 'prongLength'], recorded: ['insideSpread', 'tipToTip'] },
+  pronghorn: { ...nothing, compared: ['hornLength', ...quarters, 'prongLength'], recorded: ['insideSpread', 'tipToTip'] },
   'bighorn-sheep': sheep,
   'desert-sheep': sheep,
   'dall-sheep': sheep,
   'stone-sheep': sheep,
   'mountain-goat': goat,
-  'bison': goat,
-  'muskox': {
+  bison: goat,
+  muskox: {
     ...nothing,
     compared: ['hornLength', 'bossWidth', 'firstQuarterWidth', 'secondQuarter', 'thirdQuarter'],
     recorded: ['greatestSpread', 'tipToTip'],
   },
   'black-bear': skull,
   'grizzly-bear': skull,
-  'cougar': skull,
+  cougar: skull,
 }
 
 /** A sheet as written. */

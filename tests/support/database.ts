@@ -123,7 +123,7 @@ async function copyBase(admin: Connection, name: string): Promise<void> {
   }
   const triggers = await rows<RowDataPacket & { Trigger: string }>(admin, `SHOW TRIGGERS FROM ${quote(base)}`)
   for (const { Trigger: trigger } of triggers) {
-    const [made] = await rows<RowDataPacket & { 'SQL Original Statement': string, 'sql_mode': string }>(admin, `SHOW CREATE TRIGGER ${quote(base)}.${quote(trigger)}`)
+    const [made] = await rows<RowDataPacket & { 'SQL Original Statement': string, sql_mode: string }>(admin, `SHOW CREATE TRIGGER ${quote(base)}.${quote(trigger)}`)
     await admin.query('SET SESSION sql_mode = ?', [made!.sql_mode])
     await admin.query(made!['SQL Original Statement'])
   }

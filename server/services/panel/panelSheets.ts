@@ -199,4 +199,3 @@ export async function signJointSheet(registry: Registry, actor: ActiveActor, uid
     return true
   })
 }
-

@@ -85,4 +85,3 @@ async function stakesIn(registry: Registry, row: DocketRow, keys: Awaited<Return
   const stakes = stakesOf(await loadStakes(registry.db, entry, await listPeople(registry.db, entry.id)), keys, 'vote')
   return stakes.map(stake => 'part' in stake ? `${stake.kind}.${stake.part}` : stake.kind)
 }
-
