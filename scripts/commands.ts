@@ -8,6 +8,7 @@ import { ConfigError, type HartrollConfig } from '../server/config'
 import { firstRegistrarLink } from '../server/services/people/invite'
 import { isDomainError } from '../shared/errors'
 import { checkRegistry } from '../server/services/integrity/check'
+import { FileStorage } from '../server/storage/files'
 
 /** @returns exit code */
 type Command = (config: HartrollConfig, args: readonly string[]) => Promise<number>
@@ -46,9 +47,10 @@ const prepare: Command = async (config, args) => {
 /** Says every thing in the database that does not agree, a line each; exit code 1 when there is one. */
 const check: Command = async (config) => {
   const db = connect(databaseConfig(config.databaseUrl, { statementTimeout: 0, poolMax: 1 }))
+  const storage = new FileStorage(config)
   try {
     let findings = 0
-    for await (const { code, where, detail } of checkRegistry(db, null, what => say(`Checking ${what} …`))) {
+    for await (const { code, where, detail } of checkRegistry(db, key => storage.size(key), what => say(`Checking ${what} …`))) {
       findings++
       say(`${code} ${where}${detail ? `: ${detail}` : ''}`)
     }

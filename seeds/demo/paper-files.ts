@@ -1,8 +1,13 @@
+import { mkdtemp, rm, writeFile } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import path from 'node:path'
 import type { Knex } from 'knex'
 import sharp from 'sharp'
 import { SPECIES } from '../reference/species'
 import { DOCUMENT_KINDS, type DocumentKind } from '#shared/domain/workflow/origins'
 import { sqlTime } from '../../db/time'
+import { picturesOfPages } from '../../server/services/documents/pdfPages'
+import { thumbnailOf, type Picture } from '../../server/services/documents/pictures'
 import { insertMany, nextId } from '../bulk'
 import { letter, photograph, type View } from './papers'
 import { type Random, uidAt } from './random'
@@ -28,12 +33,12 @@ interface Drawn {
   readonly thumbFileId: number | null
   readonly width: number | null
   readonly height: number | null
-  readonly pages: number | null
+  /** pictures of the pages of a letter; null for a photograph, or where none could be made */
+  readonly pages: readonly { readonly fileId: number, readonly width: number, readonly height: number }[] | null
   readonly ending: 'jpg' | 'pdf'
 }
 
 const VIEWS: Readonly<Partial<Record<DocumentKind, View>>> = { photo_front: 'front', photo_left: 'left', photo_right: 'right', photo_field: 'field' }
-const THUMBNAIL = 360
 /** Drawn at the same time; more would only wait for a processor. */
 const AT_ONCE = 4
 /** Different drawings of one kind; only the photographs of entries under way are drawn for each alone. */
@@ -56,6 +61,19 @@ const family = (category: string) => SPECIES.find(species => category === specie
 function nameOf({ entryId, kind, category }: PromisedPaper, own: boolean): string {
   if (!VIEWS[kind]) return `${kind} ${entryId % VARIANTS.letters}`
   return own ? `${kind} of ${entryId}` : `${kind} ${family(category)} ${entryId % VARIANTS.photographs}`
+}
+
+/** Pictures of a letter's pages, as an upload would get them. */
+async function pagesOf(pdf: Buffer): Promise<Picture[] | null> {
+  const folder = await mkdtemp(path.join(tmpdir(), 'hartroll-letter-'))
+  try {
+    const file = path.join(folder, 'letter.pdf')
+    await writeFile(file, pdf)
+    return await picturesOfPages(file)
+  }
+  finally {
+    await rm(folder, { recursive: true, force: true })
+  }
 }
 
 /** Draws papers and keeps each once; what is asked for again under the same name is the same file. */
@@ -88,30 +106,50 @@ export class PaperDesk {
 
   private async drawAnew(category: string, kind: DocumentKind, random: Random): Promise<Drawn> {
     const view = VIEWS[kind]
-    if (!view) {
-      const fileId = await this.keep(letter(`No. ${random.whole(10_000, 99_999)}`, LETTERS[kind] ?? ['Drawn for the demonstration.']), 'application/pdf')
-      return { fileId, thumbFileId: null, width: null, height: null, pages: 1, ending: 'pdf' }
-    }
+    if (!view) return this.drawLetter(kind, random)
     const picture = await photograph(family(category), view, random)
     const { width, height } = await sharp(picture).metadata()
-    const thumbnail = await sharp(picture).resize({ width: THUMBNAIL, height: THUMBNAIL, fit: 'inside' }).webp({ quality: 72 }).toBuffer()
-    return { fileId: await this.keep(picture, 'image/jpeg'), thumbFileId: await this.keep(thumbnail, 'image/webp'), width, height, pages: null, ending: 'jpg' }
+    const thumbnail = await thumbnailOf(picture)
+    return { fileId: await this.keep(picture, 'image/jpeg'), thumbFileId: await this.keep(thumbnail.bytes, thumbnail.mime), width, height, pages: null, ending: 'jpg' }
+  }
+
+  private async drawLetter(kind: DocumentKind, random: Random): Promise<Drawn> {
+    const pdf = letter(`No. ${random.whole(10_000, 99_999)}`, LETTERS[kind] ?? ['Drawn for the demonstration.'])
+    const pictures = await pagesOf(pdf)
+    const pages = []
+    for (const { bytes, mime, width, height } of pictures ?? []) pages.push({ fileId: await this.keep(bytes, mime), width, height })
+    const thumbnail = pictures?.[0] ? await thumbnailOf(pictures[0].bytes) : null
+    return {
+      fileId: await this.keep(pdf, 'application/pdf'),
+      thumbFileId: thumbnail && await this.keep(thumbnail.bytes, thumbnail.mime),
+      width: pictures?.[0]?.width ?? null,
+      height: pictures?.[0]?.height ?? null,
+      pages: pictures && pages,
+      ending: 'pdf',
+    }
   }
 
   /** Draws what was promised and lays it under the entries. */
   async deliver(db: Knex, papers: readonly PromisedPaper[], own: boolean): Promise<void> {
     const documents: Parameters<typeof insertMany<'documents'>>[2][number][] = []
+    const pages: Parameters<typeof insertMany<'document_pages'>>[2][number][] = []
+    let id = await nextId(db, 'documents')
     for (let from = 0; from < papers.length; from += AT_ONCE) {
       await Promise.all(papers.slice(from, from + AT_ONCE).map(async (paper) => {
         const drawn = await this.draw(nameOf(paper, own), paper.category, paper.kind, paper.random)
+        const documentId = id++
+        for (const [at, page] of (drawn.pages ?? []).entries()) {
+          pages.push({ document_id: documentId, page: at + 1, file_id: page.fileId, width: page.width, height: page.height })
+        }
         documents.push({
-          uid: uidAt(paper.at, paper.random), entry_id: paper.entryId, file_id: drawn.fileId, thumb_file_id: drawn.thumbFileId, kind: paper.kind,
-          name: `${NAMES[paper.kind]}.${drawn.ending}`, width: drawn.width, height: drawn.height, pages: drawn.pages, sort: DOCUMENT_KINDS.indexOf(paper.kind),
+          id: documentId, uid: uidAt(paper.at, paper.random), entry_id: paper.entryId, file_id: drawn.fileId, thumb_file_id: drawn.thumbFileId, kind: paper.kind,
+          name: `${NAMES[paper.kind]}.${drawn.ending}`, width: drawn.width, height: drawn.height, pages: drawn.pages?.length ?? null, sort: DOCUMENT_KINDS.indexOf(paper.kind),
           released: 0, scan_state: 'not_scanned', uploaded_by: paper.by, created_at: sqlTime(paper.at),
         })
       }))
     }
     await insertMany(db, 'files', this.rows.splice(0))
     await insertMany(db, 'documents', documents)
+    await insertMany(db, 'document_pages', pages)
   }
 }
