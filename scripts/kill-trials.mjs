@@ -13,6 +13,7 @@ import { endProcess, run, sleep, tiedToParent, trySignal } from './lib/processes
 import { describe, say, seconds } from './lib/report.mjs'
 import { Client } from './kill-trials/client.mjs'
 import { entries } from './kill-trials/entries.mjs'
+import { payments } from './kill-trials/payments.mjs'
 import { votes } from './kill-trials/votes.mjs'
 
 const ROOT = fileURLToPath(new URL('..', import.meta.url))
@@ -55,7 +56,7 @@ process.exit(failed ? 1 : 0)
 /** @returns {Promise<boolean>} whether all is well */
 async function trial() {
   const databaseUrl = running().databaseUrl
-  const loads = [await entries(url), await votes(url, databaseUrl)]
+  const loads = [await entries(url), await payments(url), await votes(url, databaseUrl)]
   const stopping = new AbortController()
   const working = loads.map(load => load.work(stopping.signal))
   let slowest = 0
