@@ -1,3 +1,4 @@
+import { randomUUID } from 'node:crypto'
 import { Client, is2xx } from './client.mjs'
 import { sleep } from '../lib/processes.mjs'
 
@@ -21,12 +22,15 @@ export async function entries(url) {
   async function one(client, number, stop) {
     for (let round = 0; !stop.aborted; round++) {
       const name = `Hunter ${number} ${round}`
-      const key = `${process.pid}-${number}-${round}`
+      // An id of one's own makes a repetition harmless, also one whose first try was killed half-way.
+      const own = randomUUID()
       const created = await persist(stop, () => client.send('POST', '/api/entries', {
-        json: { category: 'mule-deer-typical', origin: 'hunted', hunterName: name },
-        headers: { 'idempotency-key': key },
+        json: { id: own, category: 'mule-deer-typical', origin: 'hunted', hunterName: name },
       }))
-      if (!created || !is2xx(created)) continue
+      if (!created || !is2xx(created)) {
+        await sleep(100)
+        continue
+      }
       answered++
       const { id } = created.body
       const entry = { version: created.body.version, names: new Set([name]) }
@@ -77,7 +81,7 @@ export async function entries(url) {
 }
 
 /**
- * Repeats a request under its idempotency key until an answer comes that is final, as a careful program would.
+ * Repeats a request until an answer comes that is final, as a careful program would.
  *
  * @param {AbortSignal} stop
  * @param {() => Promise<import('./client.mjs').Answer>} send
@@ -85,7 +89,7 @@ export async function entries(url) {
 async function persist(stop, send) {
   for (;;) {
     const answer = await send().catch(() => null)
-    if (answer && answer.status < 500 && answer.status !== 409) return answer
+    if (answer && answer.status < 500) return answer
     if (stop.aborted) return null
     await sleep(60)
   }
