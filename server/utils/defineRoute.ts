@@ -77,7 +77,7 @@ export function assertAccess(access: RouteAccess, actor: Actor): void {
  */
 export function defineRoute<A extends RouteAccess, P extends ZodType | undefined = undefined, Q extends ZodType | undefined = undefined, B extends ZodType | undefined = undefined, R = unknown>(
   definition: RouteDefinition<A, P, Q, B, R>,
-): EventHandler & { readonly access: RouteAccess } {
+): EventHandler & { readonly access: RouteAccess, readonly shape: { readonly params?: P, readonly query?: Q, readonly body?: B } } {
   const handler = defineEventHandler(async (event) => {
     try {
       const registry = event.context.registry
@@ -96,5 +96,6 @@ export function defineRoute<A extends RouteAccess, P extends ZodType | undefined
       return sendProblem(event, asDomainError(event, error))
     }
   })
-  return Object.assign(handler, { access: definition.access })
+  const { access, params, query, body } = definition
+  return Object.assign(handler, { access, shape: { params, query, body } })
 }
