@@ -34,7 +34,7 @@ describe('GET /api/records', () => {
 
   it('tells neither day nor place, address, contact or tag of anybody', async () => {
     const { body } = await get('/api/records?limit=200')
-    for (const item of body.items) expect(item.takenOn).toMatch(/^(\d{4}|\d{4}-\d{2})$|^null$/)
+    for (const item of body.items) expect(String(item.takenOn)).toMatch(/^(\d{4}|\d{4}-\d{2}|null)$/)
     const one = await get(`/api/records/${body.items[0].recordNo}`)
     const people = await app.db('entry_people').whereNotNull('address').limit(200).pluck('address') as string[]
     for (const address of people) expect(one.text + JSON.stringify(body)).not.toContain(address)
@@ -76,7 +76,7 @@ describe('GET /api/records', () => {
     const { headers: { etag } } = await get(path)
     expect((await get(path).set('If-None-Match', etag!)).status).toBe(304)
     expect((await get('/api/records?category=bison').set('If-None-Match', etag!)).status).toBe(200)
-    const { entry_id: entryId } = (await app.db('records').first('entry_id'))!
+    const { entry_id: entryId } = (await app.db('records').where({ status: 'accepted' }).first('entry_id'))!
     await app.db.transaction(trx => markRecord(trx, entryId, 'challenged'))
     expect((await get(path).set('If-None-Match', etag!)).status).toBe(200)
     await app.db.transaction(trx => markRecord(trx, entryId, 'accepted'))
@@ -125,7 +125,7 @@ describe('GET /api/records', () => {
 
 describe('GET /api/records/:recordNo', () => {
   it('shows the sheet line by line with the net of the list, the two ranks and what has happened', async () => {
-    const { record_no: no } = (await app.db('records').where({ source: 'certified' }).first('record_no'))!
+    const { record_no: no } = (await app.db('records').where({ source: 'certified', status: 'accepted' }).first('record_no'))!
     const { body } = await get(`/api/records/${no}`)
     const record = recordAnswer.parse(body)
     expect(record.sheet!.totals.net).toBe(record.net)
@@ -137,7 +137,7 @@ describe('GET /api/records/:recordNo', () => {
   })
 
   it('says that a record taken over has no sheet where it has none', async () => {
-    const row = await app.db('records').whereNull('sheet_id').first('record_no')
+    const row = await app.db('records').whereNull('sheet_id').where({ status: 'accepted' }).first('record_no')
     expect((await get(`/api/records/${row!.record_no}`)).body.sheet).toBeNull()
   })
 
@@ -147,7 +147,7 @@ describe('GET /api/records/:recordNo', () => {
   })
 
   it('no longer shows a record that was struck', async () => {
-    const row = (await app.db('records').orderBy('id', 'desc').first('id', 'record_no', 'status'))!
+    const row = (await app.db('records').where({ status: 'accepted' }).orderBy('id', 'desc').first('id', 'record_no', 'status'))!
     await app.db('records').where({ id: row.id }).update({ status: 'struck' })
     expect((await get(`/api/records/${row.record_no}`)).status).toBe(404)
     await app.db('records').where({ id: row.id }).update({ status: row.status })
