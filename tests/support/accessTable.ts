@@ -1,5 +1,5 @@
 import type { Role } from '../../shared/domain/access/roles'
-import { DEER } from './scene'
+import { DEER, PASSWORD } from './scene'
 
 /*
  * Who may call what, in one place and apart from the program: a route or page that is missing here, or that lets in
@@ -162,13 +162,17 @@ export interface PartyRow {
   readonly stage: 'draft' | 'measuring' | 'certified' | 'in_review' | 'at_panel'
   /** more than the route, where one has several acts */
   readonly act?: string
+  readonly query?: string
+  /** code by which this route keeps out those who may see the entry but not do this */
+  readonly refusal?: string
+  readonly sittingOpen?: boolean
   readonly body?: (asked: Asked) => object
   readonly headers?: (asked: Asked) => Readonly<Record<string, string>>
   /** who is let in; whoever else hears 401, 403 or 404 */
   readonly may: readonly Party[]
 }
 
-const SEES_IN_REVIEW: readonly Party[] = ['owner', 'assignedMeasurer', 'reviewer', 'registrar', 'staked']
+const SEES_IN_REVIEW: readonly Party[] = ['owner', 'assignedMeasurer', 'reviewer', 'registrar']
 const STALE = () => ({ 'if-match': '"9999"' })
 const move = (transition: string, more: (asked: Asked) => object = () => ({})) => ({
   route: 'POST /api/entries/[id]/transitions', act: transition, body: (asked: Asked) => ({ transition, version: asked.version, ...more(asked) }),
@@ -176,15 +180,17 @@ const move = (transition: string, more: (asked: Asked) => object = () => ({})) =
 
 /** Routes whose answer depends on how somebody stands to the entry: owner, other, one with a stake. */
 export const PARTY_ROWS: readonly PartyRow[] = [
-  { route: 'GET /api/entries/[id]', stage: 'draft', may: ['owner', 'registrar', 'staked'] },
-  { route: 'GET /api/entries/[id]', stage: 'measuring', may: ['owner', 'assignedMeasurer', 'registrar', 'staked'] },
+  { route: 'GET /api/entries/[id]', stage: 'draft', may: ['owner', 'registrar'] },
+  { route: 'GET /api/entries/[id]', stage: 'measuring', may: ['owner', 'assignedMeasurer', 'registrar'] },
   { route: 'GET /api/entries/[id]', stage: 'in_review', may: SEES_IN_REVIEW },
   { route: 'GET /api/entries/[id]', stage: 'at_panel', may: [...SEES_IN_REVIEW, 'chair', 'judge'] },
   { route: 'GET /api/entries/[id]/events', stage: 'in_review', may: SEES_IN_REVIEW },
   { route: 'GET /api/entries/[id]/statement', stage: 'in_review', may: SEES_IN_REVIEW },
   { route: 'GET /api/entries/[id]/documents', stage: 'in_review', may: ['owner', 'assignedMeasurer', 'reviewer', 'registrar'] },
   { route: 'GET /api/entries/[id]/money', stage: 'in_review', may: ['owner', 'reviewer', 'registrar'] },
-  { route: 'GET /api/desk/files/[id]', stage: 'in_review', may: ['assignedMeasurer', 'reviewer', 'registrar'] },
+  { route: 'GET /api/desk/files/[id]', act: 'as=measurer', stage: 'measuring', query: '?as=measurer', may: ['assignedMeasurer'] },
+  { route: 'GET /api/desk/files/[id]', act: 'as=office', stage: 'in_review', query: '?as=office', may: ['reviewer', 'registrar'] },
+  { route: 'GET /api/desk/files/[id]', act: 'as=judge', stage: 'at_panel', query: '?as=judge', may: ['chair', 'judge'] },
   { route: 'PATCH /api/entries/[id]', stage: 'draft', body: () => ({ sex: 'female' }), headers: STALE, may: ['owner'] },
   { route: 'PATCH /api/entries/[id]', stage: 'measuring', body: () => ({ sex: 'female' }), headers: STALE, may: ['owner'] },
   { route: 'PUT /api/entries/[id]/sheet', stage: 'measuring', body: () => ({ measurements: DEER }), headers: STALE, may: ['assignedMeasurer'] },
@@ -193,15 +199,15 @@ export const PARTY_ROWS: readonly PartyRow[] = [
   { route: 'PUT /api/entries/[id]/checks/[check]', stage: 'in_review', may: ['reviewer'] },
   { route: 'DELETE /api/entries/[id]/checks/[check]', stage: 'in_review', may: ['reviewer'] },
   { route: 'POST /api/entries/[id]/requests', stage: 'in_review', body: () => ({ kind: 'explain', text: 'Where did it hang?' }), may: ['reviewer'] },
-  { route: 'PATCH /api/documents/[id]', stage: 'certified', body: () => ({ kind: 'other' }), may: ['owner'] },
-  { route: 'DELETE /api/documents/[id]', stage: 'certified', may: ['owner'] },
+  { route: 'PATCH /api/documents/[id]', stage: 'certified', body: () => ({ kind: 'other' }), refusal: 'file_settled', may: ['owner'] },
+  { route: 'DELETE /api/documents/[id]', stage: 'certified', refusal: 'file_settled', may: ['owner'] },
   { route: 'POST /api/entries/[id]/declarations', stage: 'in_review', body: () => ({ kind: 'other' }), may: ['assignedMeasurer', 'reviewer', 'registrar', 'staked'] },
   { route: 'GET /api/panel/sittings/[id]', stage: 'at_panel', may: ['chair', 'judge', 'reviewer', 'registrar', 'staked'] },
   { route: 'POST /api/sittings/[id]/open', stage: 'at_panel', body: () => ({}), may: ['chair'] },
-  { route: 'PUT /api/sittings/[id]/items/[item]/ballot', stage: 'at_panel', body: () => ({ vote: 'accept' }), may: ['chair', 'judge'] },
+  { route: 'PUT /api/sittings/[id]/items/[item]/ballot', stage: 'at_panel', sittingOpen: true, body: () => ({ vote: 'accept' }), may: ['chair', 'judge'] },
   { route: 'POST /api/sittings/[id]/items/[item]/second-measuring', stage: 'at_panel', body: () => ({ reason: 'To be sure' }), may: ['chair', 'judge'] },
   { ...move('ask_measurer'), stage: 'draft', may: ['owner'] },
-  { ...move('certify', () => ({ password: 'wrong' })), stage: 'measuring', may: ['assignedMeasurer'] },
+  { ...move('certify', () => ({ password: PASSWORD })), stage: 'measuring', may: ['assignedMeasurer'] },
   { ...move('hand_back', () => ({ comment: 'Not mine' })), stage: 'measuring', may: ['assignedMeasurer'] },
   { ...move('submit'), stage: 'certified', may: ['owner'] },
   { ...move('return', () => ({ comment: 'More' })), stage: 'in_review', may: ['reviewer'] },

@@ -6,6 +6,7 @@ import { isoTime } from '../../../db/time'
 import type { Registry } from '../../composition'
 import { findEntry } from '../../repositories/entries'
 import * as payments from '../../repositories/payments'
+import { assertSees } from '../documents/access'
 import { accessOf } from '../entries/access'
 import { momentOf } from '../moment'
 import { PAYABLE_STATES } from './checkout'
@@ -31,7 +32,7 @@ export interface EntryMoney {
 /**
  * What is owed and what was paid. The entrant sees their own; office and registrar see it where they may read the entry.
  *
- * @throws DomainError `not_found` for everybody else
+ * @throws DomainError `not_found` for everybody else, `stake`
  */
 export async function readMoney(registry: Registry, actor: ActiveActor, entryUid: string): Promise<EntryMoney> {
   const { db } = registry
@@ -39,6 +40,7 @@ export async function readMoney(registry: Registry, actor: ActiveActor, entryUid
   const access = entry && await accessOf(db, entry)
   const own = access !== undefined && isOwner(actor, access)
   if (!entry || !access || !(own || (hasAnyRole(actor, ['reviewer', 'registrar']) && canReadEntry(actor, access)))) throw new DomainError('not_found')
+  if (!own) await assertSees(db, actor, entry)
   const { today } = await momentOf(registry)
   const fee = await feeStanding(db, entry, today)
   const checkouts = await payments.listCheckouts(db, entry.id)
