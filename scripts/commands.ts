@@ -7,6 +7,7 @@ import { createRegistry } from '../server/composition'
 import { ConfigError, type HartrollConfig } from '../server/config'
 import { firstRegistrarLink } from '../server/services/people/invite'
 import { isDomainError } from '../shared/errors'
+import { assertWorkflowsUsable } from '../server/services/workflow/load'
 import { checkRegistry } from '../server/services/integrity/check'
 import { FileStorage } from '../server/storage/files'
 
@@ -32,6 +33,9 @@ const prepare: Command = async (config, args) => {
       say(`Tables: ${names.length} changes made`)
     }
     await seedReference(db, systemClock.now())
+    await assertWorkflowsUsable(db).catch((error: Error) => {
+      throw new ConfigError(error.message)
+    })
   }
   finally {
     await db.destroy()

@@ -5,7 +5,6 @@ import type { WorkflowLimits } from '../../../shared/domain/workflow/limits'
 import { DEFAULT_LIMITS } from '../../../shared/domain/workflow/limits'
 import type { TransitionRow } from '../../../shared/domain/workflow/rows'
 import { DomainError } from '../../../shared/errors'
-import type { Registry } from '../../composition'
 import type { WorkflowRecord } from '../../repositories/workflows'
 import { findCurrentWorkflowId, findWorkflow, listWorkflowIds } from '../../repositories/workflows'
 
@@ -48,10 +47,13 @@ function sayProblem(problem: WorkflowProblem): string {
   return `${problem.code} in ${problem.where}: ${problem.name}`
 }
 
-/** Refuses a start on workflow rows that cannot be used. Throws an Error of one line that names the row. */
-export async function assertWorkflowsUsable(registry: Registry): Promise<void> {
-  for (const id of await listWorkflowIds(registry.db)) {
-    const record = await findWorkflow(registry.db, id)
+/**
+ * Refuses a start on workflow rows that cannot be used: unknown names, a guard for stake, signature or quorum that was taken away.
+ * Throws an Error of one line that names the row.
+ */
+export async function assertWorkflowsUsable(db: Knex): Promise<void> {
+  for (const id of await listWorkflowIds(db)) {
+    const record = await findWorkflow(db, id)
     const [problem] = checkWorkflow(inDoubt(record!))
     if (problem) throw new Error(`Workflow version ${record!.number} cannot be used: ${sayProblem(problem)}`)
   }
