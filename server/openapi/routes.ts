@@ -1,3 +1,6 @@
+// Scripts and tests are typed by another project, which does not read the server's declarations; they are no module to import.
+// eslint-disable-next-line @typescript-eslint/triple-slash-reference
+/// <reference path="../types/handlers.d.ts" />
 import { handlers } from '#nitro-internal-virtual/server-handlers'
 import type { ZodType } from 'zod'
 import type { RouteAccess } from '../utils/defineRoute'

@@ -51,7 +51,7 @@ async function inReview(): Promise<string> {
   const id = await certified()
   const { db } = app
   const { id: entryId } = (await db('entries').where({ uid: id }).first('id'))!
-  for (const kind of ['photo_front', 'photo_left', 'photo_right', 'photo_field', 'tag_or_licence']) {
+  for (const kind of ['photo_front', 'photo_left', 'photo_right', 'photo_field', 'tag_or_licence'] as const) {
     const sha256 = newUid(app.clock.now()).replaceAll('-', '').padEnd(64, '0')
     const [file] = await db('files').insert({ sha256, size: 1, mime: 'image/jpeg', storage_key: sha256, created_at: '2026-03-01 00:00:00.000' })
     await db('documents').insert({ uid: newUid(app.clock.now()), entry_id: entryId, file_id: file!, kind, name: kind, created_at: '2026-03-01 00:00:00.000' })

@@ -17,15 +17,15 @@ beforeAll(async () => {
 })
 
 describe.each([
-  ['home', () => '/'],
-  ['all lists', () => '/records'],
-  ['a class', () => '/records?category=mule-deer-typical'],
-  ['a narrow choice', () => '/records?category=mule-deer-typical&method=rifle&from=1950&to=2025&q=a&sort=-takenOn'],
-  ['nothing found', () => '/records?category=moose&q=zzzz'],
-  ['a record', () => `/records/${withSheet}`],
-  ['a record without a sheet', () => `/records/${bare}`],
-  ['a challenged record', () => `/records/${challenged}`],
-  ['measurers', () => '/measurers'],
+  ['home', (): string => '/'],
+  ['all lists', (): string => '/records'],
+  ['a class', (): string => '/records?category=mule-deer-typical'],
+  ['a narrow choice', (): string => '/records?category=mule-deer-typical&method=rifle&from=1950&to=2025&q=a&sort=-takenOn'],
+  ['nothing found', (): string => '/records?category=moose&q=zzzz'],
+  ['a record', (): string => `/records/${withSheet}`],
+  ['a record without a sheet', (): string => `/records/${bare}`],
+  ['a challenged record', (): string => `/records/${challenged}`],
+  ['measurers', (): string => '/measurers'],
 ] as const)('%s', (name, path) => {
   test.each(WIDTHS)('fits %i pixels, in light and dark, and axe finds nothing', async (width) => {
     for (const colorScheme of ['light', 'dark'] as const) {
