@@ -142,4 +142,11 @@ describe('entries by how somebody stands to them', () => {
     }
     expect([...letIn].sort(), heard.join('\n')).toEqual([...row.may].sort())
   })
+
+  test('a stake closes the file on the desk: nothing of the people, the papers, the sheet or its figures is told', async () => {
+    const asked = await prepare({ route: '', stage: 'in_review', may: [] })
+    const { status, body } = await ask(clients.get('staked')!, 'GET /api/desk/files/[id]', `/api/desk/files/${asked.entry}?as=office`)
+    expect([status, body.viewer.stakes]).toEqual([200, ['part.guide']])
+    expect(body).toMatchObject({ people: [], papers: [], sheets: [], requests: [], checks: [], events: [], doubles: [], statement: null, net: null, gross: null })
+  })
 })

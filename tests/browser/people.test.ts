@@ -39,7 +39,7 @@ describe('from a stranger to an account with a second factor', () => {
     const secret = (await page.locator('[data-totp-secret]').textContent())!.replace(/\s/g, '')
     await page.getByLabel('Then enter the code that it shows').fill(totpCode(secret, app.clock.now()))
     await page.getByRole('button', { name: 'Switch it on' }).click()
-    await page.getByText('Your recovery codes').waitFor()
+    await page.getByText('Your recovery codes', { exact: true }).waitFor()
     expect(await page.locator('[data-recovery-code]').count()).toBe(10)
 
     await page.getByRole('button', { name: 'Sign out' }).click()
@@ -84,7 +84,7 @@ describe('a registrar at work', () => {
     await dialog.locator('#invite-code').waitFor()
     await dialog.getByRole('button', { name: 'Send the invitation' }).click()
     await page.getByText('The invitation to perrin.moss@ochrebasin.example is on its way.').waitFor()
-    await page.getByText('invited, not accepted yet').first().waitFor()
+    await page.getByText('invited, not accepted yet').filter({ visible: true }).first().waitFor()
 
     await visit(page, `/desk/registrar/people/${person.uid}`)
     await page.getByLabel('Give a role').selectOption('shop')

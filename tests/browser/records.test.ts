@@ -75,7 +75,7 @@ describe('with JavaScript', () => {
     await page.locator('select[name=district]').selectOption({ index: 2 })
     await page.waitForURL(/district=/)
     await page.waitForFunction(text => document.querySelector('tbody')?.innerText !== text, before)
-    const narrowed = await page.locator('[role=status]').innerText()
+    const narrowed = await page.locator('main [role=status]').innerText()
     expect(narrowed).toMatch(/^Elk, all classes, (?!all districts)/)
     await page.getByRole('columnheader', { name: /Name/ }).getByRole('link').click()
     await page.waitForURL(/sort=hunter/)

@@ -1,6 +1,7 @@
 import type { Knex } from 'knex'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { createRegistry, type Registry } from '../../server/composition'
+import { readConfig } from '../../server/config'
 import { listsVersion } from '../../server/read-models/records/names'
 import { listRecords } from '../../server/services/records/listRecords'
 import { RECORD_SORTS, recordsQuery, type RecordSort } from '../../shared/schemas/records'
@@ -26,7 +27,7 @@ beforeAll(async () => {
   await fill(test.db, { ...kept, category: other.category, species: other.species }, 500)
   await countLists(test.db)
   // Handler counters belong to a connection.
-  registry = createRegistry({ databaseUrl: test.url, secret: 'a secret of the tests alone', publicUrl: 'http://registry.example' } as never, { poolSize: 1 })
+  registry = createRegistry(readConfig({ DATABASE_URL: test.url, HARTROLL_SECRET: 'a secret of the tests alone, long enough', HARTROLL_PUBLIC_URL: 'http://registry.example' }), { poolSize: 1 })
   db = registry.db
 })
 afterAll(() => registry.close())

@@ -10,7 +10,8 @@ import * as documents from '../../repositories/documents'
 import type { Incoming } from '../../storage/files'
 import { appendEvent } from '../events/append'
 import { momentOf, newUid, type Moment } from '../moment'
-import { lockedEntry, readableEntry, removalContext, type DocumentsOf } from './access'
+import { lockedEntry, readableEntry, type SeenEntry } from '../entries/sees'
+import { removalContext } from './removal'
 import { LIMITS } from './limits'
 import { cleanName } from './names'
 import { prepare, type KeptFile, type Prepared } from './prepare'
@@ -27,7 +28,7 @@ export interface Upload {
 const MB = 1024 * 1024
 const DAY = 86_400_000
 
-async function assertRoom(db: Knex, actor: ActiveActor, { entry, access }: DocumentsOf, kind: DocumentKind | null, moment: Moment): Promise<void> {
+async function assertRoom(db: Knex, actor: ActiveActor, { entry, access }: SeenEntry, kind: DocumentKind | null, moment: Moment): Promise<void> {
   const kinds = addableKinds(actor, access)
   if (kinds.length === 0) throw new DomainError('wrong_state')
   if (kind !== null && !kinds.includes(kind)) throw new DomainError('invalid_input', { fields: [{ path: 'kind', code: 'document_kind' }] })
@@ -99,7 +100,7 @@ async function insert(trx: Knex.Transaction, actor: ActiveActor, entryId: number
 }
 
 /** Marks a document as removed, where the rules allow it; the file itself stays until nothing rests on it. */
-export async function takeAway(trx: Knex.Transaction, actor: ActiveActor, found: DocumentsOf, uid: string, moment: Moment) {
+export async function takeAway(trx: Knex.Transaction, actor: ActiveActor, found: SeenEntry, uid: string, moment: Moment) {
   const document = await documents.findDocument(trx, uid)
   if (!document || document.entry_id !== found.entry.id) throw new DomainError('not_found')
   const standing = { kind: document.kind, uploadedBy: document.uploaded_by, createdAt: document.created_at }

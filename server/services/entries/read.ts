@@ -19,6 +19,7 @@ import { loadWorkflow } from '../workflow/load'
 import { accessOf } from './access'
 import { findKeys, loadContext } from './context'
 import { loadFacts } from './facts'
+import { readableEntry } from './sees'
 
 async function readable(db: Knex, actor: ActiveActor, uid: string): Promise<{ entry: EntriesRow, access: Awaited<ReturnType<typeof accessOf>> }> {
   const entry = await findEntry(db, uid)
@@ -63,10 +64,14 @@ export async function readEntry(registry: Registry, actor: ActiveActor, uid: str
   })
 }
 
-/** What has happened to an entry, oldest first. Only staff are told who of the staff acted. */
+/**
+ * What has happened to an entry, oldest first. Only staff are told who of the staff acted.
+ *
+ * @throws DomainError `not_found`, `stake`, `forbidden` for a judge who is to measure blind
+ */
 export async function readEvents(registry: Registry, actor: ActiveActor, uid: string): Promise<{ items: EventShown[] }> {
   const { db } = registry
-  const { entry, access } = await readable(db, actor, uid)
+  const { entry, access } = await readableEntry(db, actor, uid)
   const staff = !isOwner(actor, access) && actor.roles.some(role => role === 'reviewer' || role === 'registrar' || role === 'judge')
   const [events, texts] = await Promise.all([listEvents(db, entry.id), listEventTexts(db, entry.id)])
   return { items: events.map(event => presentEvent(event, texts.filter(text => text.event_id === event.id), { staff, actor, entry })) }

@@ -9,10 +9,11 @@ import { hasOpenFacts } from '../../../shared/domain/workflow/states'
 import { DomainError } from '../../../shared/errors'
 import type { Part } from '../../../shared/domain/access/stakes'
 import type { Registry } from '../../composition'
-import { findEntry, lockEntry, updateEntry } from '../../repositories/entries'
+import { lockEntry, updateEntry } from '../../repositories/entries'
 import { listPeople } from '../../repositories/entryPeople'
 import { findStatementText, insertStatement, listStatements, voidStatementBy } from '../../repositories/statements'
 import { accessOf } from '../entries/access'
+import { readableEntry } from '../entries/sees'
 import { appendEvent } from '../events/append'
 import { momentOf, newUid } from '../moment'
 
@@ -33,9 +34,7 @@ async function signersOf(db: Parameters<typeof listPeople>[0], entryId: number, 
 /** The statement in its newest words, who has to sign it, and who has. */
 export async function readStatement(registry: Registry, actor: ActiveActor, uid: string, locale: string): Promise<StatementShown> {
   const { db } = registry
-  const entry = await findEntry(db, uid)
-  const access = entry && await accessOf(db, entry)
-  if (!entry || !access || !canReadEntry(actor, access)) throw new DomainError('not_found')
+  const { entry, access } = await readableEntry(db, actor, uid)
   const [text, signers, signed] = await Promise.all([findStatementText(db, locale), signersOf(db, entry.id, entry.origin), listStatements(db, entry.id)])
   if (!text) throw new DomainError('not_configured')
   return {

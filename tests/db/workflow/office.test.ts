@@ -129,7 +129,7 @@ describe('withdrawing', () => {
     await expect(scene.move(scene.cast.entrant, uid, { transition: 'withdraw' })).rejects.toMatchObject(failing('confirmed'))
     await scene.move(scene.cast.entrant, uid, { transition: 'withdraw', confirm: true })
     expect(await scene.state(uid)).toBe('withdrawn')
-    expect(await on.registry.db('payment_commands').where({ idempotency_key: `refund:${uid}` }).first('kind', 'state')).toEqual({ kind: 'refund', state: 'waiting' })
+    expect(await on.registry.db('payment_commands as c').join('entries as e', 'e.id', 'c.entry_id').where({ 'e.uid': uid, 'c.kind': 'refund' }).first('c.kind', 'c.state')).toEqual({ kind: 'refund', state: 'waiting' })
     expect(await on.registry.db('animals as a').join('entries as e', 'e.animal_id', 'a.id').where('e.uid', uid).first('a.live_entry_id')).toEqual({ live_entry_id: null })
   })
 

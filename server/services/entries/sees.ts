@@ -6,13 +6,11 @@ import { stakesOf } from '../../../shared/domain/access/stakes'
 import { DomainError } from '../../../shared/errors'
 import { findEntry, lockEntry } from '../../repositories/entries'
 import { listPeople } from '../../repositories/entryPeople'
-import { listRequests } from '../../repositories/office'
 import { findOpenRemeasuring } from '../../repositories/panel'
-import { accessOf } from '../entries/access'
-import { findKeys, loadStakes } from '../entries/context'
-import type { RemovalContext } from './rules'
+import { accessOf } from './access'
+import { findKeys, loadStakes } from './context'
 
-export interface DocumentsOf {
+export interface SeenEntry {
   readonly entry: EntriesRow
   readonly access: EntryAccess
 }
@@ -24,10 +22,10 @@ async function measuresBlind(db: Knex, actor: ActiveActor, entry: EntriesRow): P
 }
 
 /**
- * Lets in whoever may see the papers of an entry: its owner or keeper, the measurer it is assigned to, and staff who
- * may read it and have no stake in it.
+ * Lets in whoever may see what lies in an entry's file: its owner or keeper, the measurer it is assigned to, and staff who
+ * may read it, have no stake in it and are not to measure it blind.
  *
- * @throws DomainError `not_found`, `stake`
+ * @throws DomainError `not_found`, `forbidden`, `stake`
  */
 export async function assertSees(db: Knex, actor: ActiveActor, entry: EntriesRow): Promise<EntryAccess> {
   const access = await accessOf(db, entry)
@@ -40,24 +38,14 @@ export async function assertSees(db: Knex, actor: ActiveActor, entry: EntriesRow
   return access
 }
 
-export async function readableEntry(db: Knex, actor: ActiveActor, uid: string): Promise<DocumentsOf> {
+export async function readableEntry(db: Knex, actor: ActiveActor, uid: string): Promise<SeenEntry> {
   const entry = await findEntry(db, uid)
   if (!entry) throw new DomainError('not_found')
   return { entry, access: await assertSees(db, actor, entry) }
 }
 
-export async function lockedEntry(trx: Knex.Transaction, actor: ActiveActor, uid: string): Promise<DocumentsOf> {
+export async function lockedEntry(trx: Knex.Transaction, actor: ActiveActor, uid: string): Promise<SeenEntry> {
   const entry = await lockEntry(trx, uid)
   if (!entry) throw new DomainError('not_found')
   return { entry, access: await assertSees(trx, actor, entry) }
-}
-
-export async function removalContext(db: Knex, { entry, access }: DocumentsOf): Promise<RemovalContext> {
-  const open = (await listRequests(db, entry.id)).filter(request => request.closed_at === null)
-  return {
-    entry: access,
-    stateSince: entry.state_since,
-    submittedAt: entry.submitted_at,
-    wanted: open.flatMap(request => JSON.parse(request.wants) as string[]),
-  }
 }
