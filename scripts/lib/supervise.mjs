@@ -2,7 +2,10 @@ import { spawn } from 'node:child_process'
 import { openSync } from 'node:fs'
 import { endProcess, sleep, tiedToParent } from './processes.mjs'
 
-/** A part that ends this often within a minute has a fault that starting it again does not cure. */
+/**
+ * A part that ends of itself this often within a minute has a fault that starting it again does not cure. One that was
+ * killed from outside has none: it only waits longer each time.
+ */
 const MOST_RESTARTS = 6
 const WINDOW_MS = 60_000
 
@@ -32,7 +35,7 @@ export function keepRunning({ name, args, env, cwd, logFile, graceMs, onEvent, o
   let stopping = false
   /** @type {import('node:child_process').ChildProcess | undefined} */
   let child
-  /** @type {number[]} */
+  /** @type {{ at: number, ofItself: boolean }[]} */
   const ends = []
 
   const start = () => {
@@ -44,9 +47,9 @@ export function keepRunning({ name, args, env, cwd, logFile, graceMs, onEvent, o
     child.once('exit', async (code, signal) => {
       if (stopping) return
       const now = Date.now()
-      ends.push(now)
-      while (ends[0] !== undefined && ends[0] < now - WINDOW_MS) ends.shift()
-      if (ends.length > MOST_RESTARTS) {
+      ends.push({ at: now, ofItself: signal === null })
+      while (ends[0] !== undefined && ends[0].at < now - WINDOW_MS) ends.shift()
+      if (ends.filter(end => end.ofItself).length > MOST_RESTARTS) {
         onGivenUp(name)
         return
       }
