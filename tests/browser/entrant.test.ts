@@ -35,7 +35,7 @@ describe('an entrant\'s pages', () => {
       await scene.entry('draft')
       for (const colorScheme of ['light', 'dark'] as const) {
         const page = await browser.open({ width, as: entrant, colorScheme })
-        for (const [name, address] of [['entries', '/desk/entries'], ['entry-new', '/desk/entries/new'], ['entry', `/desk/entries/${uid}`], ['claim', '/account/claim']] as const) {
+        for (const [name, address] of [['entries', '/desk/entries'], ['entry-new', '/desk/entries/new'], ['entry', `/desk/entries/${uid}`], ['claim', '/claim']] as const) {
           await visit(page, address)
           await sound(page, name)
           await shot(page, `${name}-${width}-${colorScheme}`)

@@ -15,7 +15,7 @@ export const TOKENS: Readonly<Record<TokenKind, { readonly livesMs: number, read
   change_email: { livesMs: DAY, page: '/confirm' },
   invite: { livesMs: 14 * DAY, page: '/invite' },
   first_registrar: { livesMs: DAY, page: '/invite' },
-  claim: { livesMs: 60 * DAY, page: '/account/claim' },
+  claim: { livesMs: 60 * DAY, page: '/claim' },
 }
 
 export interface MintOptions {
