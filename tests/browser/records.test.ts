@@ -81,7 +81,8 @@ describe('with JavaScript', () => {
     expect(narrowed).toMatch(/^Elk, all classes, (?!all districts)/)
     await page.getByRole('columnheader', { name: /Name/ }).getByRole('link').click()
     await page.waitForURL(/sort=hunter/)
-    expect(await page.getByRole('columnheader', { name: /Name/ }).getAttribute('aria-sort')).toBe('ascending')
+    // The address changes first, the lines follow when they have come.
+    await expect.poll(() => page.getByRole('columnheader', { name: /Name/ }).getAttribute('aria-sort')).toBe('ascending')
     await page.goBack()
     await page.goBack()
     await page.waitForURL(url => !url.search.includes('district'))
