@@ -19,6 +19,9 @@ const FLAGS = [
 /** Phone, tablet, desk: every page is looked at in all three. */
 export const WIDTHS = [320, 768, 1440] as const
 
+/** The window of a device as wide as that. */
+const sizeOf = (width: number) => ({ width, height: width < 500 ? 700 : 900 })
+
 /** Rules of WCAG 2.2 up to AA, as axe tags them, and its own best practices. */
 const AXE_TAGS = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice']
 
@@ -64,7 +67,7 @@ export function useBrowser(app: App): Browsing {
     if (!browser) throw new Error('The browser is there from beforeAll on')
     const context = await browser.newContext({
       baseURL: app.url,
-      viewport: { width, height: width < 500 ? 700 : 900 },
+      viewport: sizeOf(width),
       javaScriptEnabled: javaScript,
       colorScheme,
       reducedMotion: 'reduce',
@@ -109,15 +112,18 @@ export async function visit(page: Page, address: string): Promise<void> {
 
 const AXE = createRequire(import.meta.url).resolve('axe-core/axe.min.js')
 
+/** Rules of axe that a theme can change; what the others find in one theme they find in both. */
+const AXE_COLOUR_RULES = ['color-contrast', 'link-in-text-block']
+
 /** What axe finds on the page, one line a finding: rule, help and the first places. */
-export async function axeFindings(page: Page, selector?: string): Promise<string[]> {
+async function axeFindings(page: Page, only: 'everything' | 'colours' = 'everything'): Promise<string[]> {
   // By the protocol, not by a script element: the page's own policy would rightly refuse that.
   if (!await page.evaluate(() => 'axe' in window)) await page.evaluate(readAxe())
-  const found = await page.evaluate(async ({ tags, within }) => {
+  const found = await page.evaluate(async (runOnly) => {
     const { axe } = window as unknown as { axe: typeof AxeNamespace }
-    const { violations } = await axe.run(within ?? document, { runOnly: { type: 'tag', values: tags }, resultTypes: ['violations'] })
+    const { violations } = await axe.run(document, { runOnly, resultTypes: ['violations'] })
     return violations.map(({ id, help, nodes }) => ({ id, help, places: nodes.slice(0, 3).map(node => `${node.target.join(' ')} ${node.failureSummary ?? ''}`) }))
-  }, { tags: AXE_TAGS, within: selector ?? null })
+  }, only === 'everything' ? { type: 'tag' as const, values: AXE_TAGS } : { type: 'rule' as const, values: AXE_COLOUR_RULES })
   return found.map(({ id, help, places }) => `${id}: ${help}\n    ${places.join('\n    ').replaceAll('\n', ' ')}`)
 }
 
@@ -127,9 +133,45 @@ function readAxe(): string {
   return axeSource
 }
 
-/** Whether the page is wider than the window: nothing may scroll sideways. @returns pixels too wide */
-export async function overflow(page: Page): Promise<number> {
-  return page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth)
+/** Nothing may scroll sideways. @returns nothing, or by how many pixels the page is too wide and what reaches out */
+export async function tooWide(page: Page): Promise<string[]> {
+  return page.evaluate(() => {
+    const { scrollWidth, clientWidth } = document.documentElement
+    if (scrollWidth <= clientWidth) return []
+    const reaching = [...document.body.querySelectorAll('*')]
+      .filter(element => element.getBoundingClientRect().right > clientWidth + 1)
+      .map(element => `${element.tagName.toLowerCase()}.${element.className} to ${Math.round(element.getBoundingClientRect().right)}: ${element.textContent?.trim().slice(0, 60)}`)
+    return [`${scrollWidth - clientWidth} px`, ...reaching.slice(-6)]
+  })
+}
+
+/** Turns the theme and waits until the last colour has faded over. */
+async function turn(page: Page, colorScheme: 'light' | 'dark'): Promise<void> {
+  await page.emulateMedia({ colorScheme })
+  await page.evaluate(async () => {
+    const frame = () => new Promise(resolve => requestAnimationFrame(resolve))
+    await frame()
+    await Promise.allSettled(document.getAnimations().map(animation => animation.finished))
+    await frame()
+  })
+}
+
+/**
+ * The page as it stands, in every width and in light and dark: nothing scrolls sideways, axe finds nothing, and a
+ * picture of each is kept.
+ */
+export async function fits(page: Page, name: string, widths: readonly number[] = WIDTHS): Promise<void> {
+  await page.evaluate(() => document.fonts.ready)
+  for (const width of widths) {
+    await page.setViewportSize(sizeOf(width))
+    await turn(page, 'light')
+    expect(await tooWide(page), `${name} at ${width} scrolls sideways`).toEqual([])
+    expect(await axeFindings(page), `${name} at ${width} in light`).toEqual([])
+    await shot(page, `${name}-${width}-light`)
+    await turn(page, 'dark')
+    expect(await axeFindings(page, 'colours'), `${name} at ${width} in dark`).toEqual([])
+    await shot(page, `${name}-${width}-dark`)
+  }
 }
 
 /** A picture of the whole page, kept in .cache/screenshots for looking at. */
