@@ -61,8 +61,9 @@ async function start() {
   if (wishes.mode === 'production' && instance.demo && wishes.databaseUrl === null) {
     throw new StartError(`The database in ${wishes.dataDir} holds demo data with known passwords; set HARTROLL_DATA to another folder for production`)
   }
-  await ensurePackages(ROOT)
+  // First of all: whoever may not install it is told at once, not after a minute of packages.
   if (wishes.databaseUrl === null && !hasMariadb()) await installMariadbServer()
+  await ensurePackages(ROOT)
 
   const environment = childEnvironment(wishes, instance)
   // Before anything is made: the address of a database of our own is not known yet, and always right.

@@ -70,10 +70,11 @@ say(`${total.passed} passed, ${total.failed} failed`)
 process.exit(total.failed === 0 && total.passed > 0 ? 0 : 1)
 
 async function setUp() {
-  await ensurePackages(ROOT)
+  // Debian's packages first: whoever may not install them is told at once, not after a minute of node packages.
   if (!hasMariadb()) await installMariadbServer()
   if (!existsSync(CHROMIUM)) await installDebian(['chromium'], 'Chromium, in which the pages are tested,', 'chromium')
   if (!existsSync('/usr/bin/pdftotext')) await installDebian(['poppler-utils'], 'pdftotext, with which papers are tested,', 'poppler-utils')
+  await ensurePackages(ROOT)
   mkdirSync(REPORTS, { recursive: true })
   await ensureBuild()
   if (!existsSync(path.join(ROOT, '.nuxt', 'eslint.config.mjs'))) {
