@@ -30,11 +30,14 @@ export function useBenchSheet(entryId: string, definition: SheetDefinition, open
     measuredOn: open.measuredOn ?? today, driedSince: open.driedSince ?? '', driedFrom: open.driedFrom ?? 'taken', wholeSkull: open.wholeSkull, reasons: { ...open.reasons },
   })
   const version = ref(open.version)
+  /** The entry's version after the last saving from here, for an act that follows at once. */
+  const entryVersion = ref(0)
   const state = ref<SaveState>('saved')
   const errors = ref<Record<string, string>>({})
   const refusal = ref<string | null>(null)
   const restored = ref(false)
   let timer: ReturnType<typeof setTimeout> | undefined
+  let running: Promise<boolean> | null = null
   let watching = false
 
   const body = () => ({
@@ -45,15 +48,24 @@ export function useBenchSheet(entryId: string, definition: SheetDefinition, open
   })
   const keep = () => localStorage.setItem(keptAt, JSON.stringify({ version: version.value, draft: draft.value, facts: facts.value } satisfies KeptSheet))
 
+  /** Saves what is not saved yet, after a saving that is under way. @returns whether all of it is on the server */
   async function save(): Promise<boolean> {
     clearTimeout(timer)
+    if (running) await running
     if (state.value === 'saved') return true
-    if (state.value === 'saving' || state.value === 'conflict') return false
+    if (state.value === 'conflict') return false
+    running = send()
+    const sent = await running
+    running = null
+    return sent
+  }
+  async function send(): Promise<boolean> {
     state.value = 'saving'
     const sent = JSON.stringify(body())
     try {
-      const answer = await api<{ version: number }>(`/api/entries/${entryId}/sheet`, { method: 'PUT', body: JSON.parse(sent), ifMatch: version.value })
+      const answer = await api<{ version: number, entryVersion: number }>(`/api/entries/${entryId}/sheet`, { method: 'PUT', body: JSON.parse(sent), ifMatch: version.value })
       version.value = answer.version
+      entryVersion.value = answer.entryVersion
       errors.value = {}
       refusal.value = null
       if (JSON.stringify(body()) === sent) {
@@ -124,5 +136,5 @@ export function useBenchSheet(entryId: string, definition: SheetDefinition, open
     if (state.value === 'unsaved') void save()
     clearTimeout(timer)
   })
-  return { draft, facts, version, state, errors, refusal, restored, save, keepMine, takeTheirs }
+  return { draft, facts, version, entryVersion, state, errors, refusal, restored, save, keepMine, takeTheirs }
 }

@@ -167,8 +167,7 @@ export function useEntryWords() {
     return t(key, { items: words.list(items) })
   }
   const asked = (code: string) => te(`names.documents.${code}`) ? t(`names.documents.${code}`) : te(`entry.missing.${code}`) ? t(`entry.missing.${code}`) : te(`entry.facts.${code}`) ? t(`entry.facts.${code}`) : words.category(code)
-  const event = (kind: string) => te(`entry.events.${kind}`) ? t(`entry.events.${kind}`) : t('entry.events.unknown')
-  return { guard, asked, event }
+  return { guard, asked }
 }
 
 /** The part of the page where something that stands in the way can be put right. */

@@ -57,9 +57,10 @@ function presentSheet(row: SheetsRow, entry: EntriesRow, names: ReadonlyMap<numb
 /** Acts on the bench; a measurer is told nothing of what the office and the panel do with the file. */
 const BENCH_EVENTS: readonly string[] = ['begin', 'begin_for', 'claim', 'ask_measurer', 'reassign', 'hand_back', 'certify', 'recertify', 'reopen']
 
-function presentEvents({ as, events, texts }: FileParts): FileEvent[] {
+function presentEvents({ as, events, texts, actor }: FileParts): FileEvent[] {
   return events.filter(event => as !== 'measurer' || BENCH_EVENTS.includes(event.kind)).map(event => ({
-    seq: event.seq, at: iso(event.at), kind: event.kind, to: event.to_state, by: event.actor_name,
+    seq: event.seq, at: iso(event.at), kind: event.kind, to: event.to_state, by: event.actor_user_id === null ? null : event.actor_name,
+    isMine: event.actor_user_id === actor.userId, args: JSON.parse(event.args) as Record<string, unknown>,
     texts: Object.fromEntries(texts.filter(text => text.event_id === event.id).map(text => [text.field, text.body])),
   }))
 }
@@ -81,7 +82,7 @@ export function presentFile(parts: FileParts): DeskFile {
   const step = category.step
   const ticked = new Map(parts.checks.map(check => [check.code, check]))
   return {
-    id: entry.uid, version: entry.version, state: entry.state, turn: WHOSE_TURN[entry.state], since: iso(entry.state_since),
+    id: entry.uid, version: entry.version, state: entry.state, turn: WHOSE_TURN[entry.state], step, since: iso(entry.state_since),
     days: Math.max(0, daysBetween(dayIn(moment.zone, new Date(iso(entry.state_since))), moment.today)),
     dueOn: entry.due_on, daysLeft: entry.due_on === null ? null : daysBetween(moment.today, entry.due_on), returnTo: entry.return_to,
     category: category.code, definition: category.definition, species: category.species, siblings: parts.siblings,

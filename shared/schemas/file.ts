@@ -1,4 +1,4 @@
-import type { WrittenMeasurements } from '#shared/domain/measuring/index'
+import type { Step, WrittenMeasurements } from '#shared/domain/measuring/index'
 import type { Part } from '#shared/domain/access/stakes'
 import type { CheckCode } from '#shared/domain/workflow/checks'
 import type { DocumentKind, Method, Origin, Sex } from '#shared/domain/workflow/origins'
@@ -25,6 +25,7 @@ export interface FilePaper {
   readonly kind: DocumentKind
   readonly name: string
   readonly mime: string
+  /** pictures of it: 1 for a photograph, 0 for a PDF of which none could be made */
   readonly pages: number
   readonly uploadedAt: string
 }
@@ -80,6 +81,9 @@ export interface FileEvent {
   readonly kind: string
   readonly to: string | null
   readonly by: string | null
+  readonly isMine: boolean
+  /** figures and codes of what happened, such as `net16` or `ground` */
+  readonly args: Readonly<Record<string, unknown>>
   /** what was written, by field; null where it was erased */
   readonly texts: Readonly<Record<string, string | null>>
 }
@@ -90,6 +94,8 @@ export interface DeskFile {
   readonly version: number
   readonly state: State
   readonly turn: Turn
+  /** in what its class is measured */
+  readonly step: Step
   readonly since: string
   readonly days: number
   readonly dueOn: string | null
