@@ -8,9 +8,9 @@ export const DESK_KINDS = [
 ] as const
 export type DeskKind = (typeof DESK_KINDS)[number]
 
-/** States that the records office sees: everything from the first submission on. */
+/** States that the records office sees: everything from the first submission on, and what is certified, for its fee. */
 export const OFFICE_STATES = [
-  'in_review', 'returned', 'at_panel', 'remeasuring', 'accepted', 'declined', 'lapsed', 'challenged', 'struck', 'withdrawn',
+  'in_review', 'certified', 'returned', 'at_panel', 'remeasuring', 'accepted', 'declined', 'lapsed', 'challenged', 'struck', 'withdrawn',
 ] as const
 export type OfficeState = (typeof OFFICE_STATES)[number]
 

@@ -192,6 +192,7 @@ export const PARTY_ROWS: readonly PartyRow[] = [
   { route: 'GET /api/entries/[id]/events', stage: 'in_review', may: SEES_IN_REVIEW },
   { route: 'GET /api/entries/[id]/statement', stage: 'in_review', may: SEES_IN_REVIEW },
   { route: 'GET /api/entries/[id]/documents', stage: 'in_review', may: ['owner', 'assignedMeasurer', 'reviewer', 'registrar'] },
+  { route: 'GET /api/entries/[id]/money', stage: 'certified', may: ['owner', 'reviewer', 'registrar'] },
   { route: 'GET /api/entries/[id]/money', stage: 'in_review', may: ['owner', 'reviewer', 'registrar'] },
   // With a stake the desk tells the head of the file and why it is closed; tests/api/access.test.ts holds that nothing else is in it.
   { route: 'GET /api/desk/files/[id]', act: 'as=measurer', stage: 'measuring', query: '?as=measurer', may: ['assignedMeasurer'] },

@@ -59,3 +59,18 @@ export async function noteDispute(trx: Knex.Transaction, entryId: number, disput
   })
   await appendEvent(trx, entry, { kind: 'fee_disputed', actor: null, args: { amount: dispute.amountMinor, currency: dispute.currency } }, moment)
 }
+
+/**
+ * Books money that is here again: a refund that did not get through, or a dispute that was won. Only what was booked as
+ * gone can come back, and only once.
+ */
+export async function noteComeBack(trx: Knex.Transaction, entryId: number, gone: MoneyMoved, kind: 'fee_refund_failed' | 'fee_dispute_won', moment: Moment): Promise<void> {
+  const entry = await lockEntryById(trx, entryId)
+  const providerId = `back-${gone.providerId}`
+  if (!entry || !await payments.findLedgerByProvider(trx, gone.providerId) || await payments.findLedgerByProvider(trx, providerId)) return
+  await payments.insertLedger(trx, {
+    uid: newUid(moment.now), entry_id: entryId, kind: 'charge', amount_minor: gone.amountMinor, currency: gone.currency,
+    provider_id: providerId, checkout_id: gone.checkoutId, reason: kind, at: moment.at,
+  })
+  await appendEvent(trx, entry, { kind, actor: null, args: { amount: gone.amountMinor, currency: gone.currency } }, moment)
+}

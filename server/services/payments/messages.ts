@@ -8,7 +8,7 @@ import { lockEntryById } from '../../repositories/entries'
 import * as payments from '../../repositories/payments'
 import { appendEvent } from '../events/append'
 import { momentOf, type Moment } from '../moment'
-import { noteCharge, noteDispute, noteRefund } from './ledger'
+import { noteCharge, noteComeBack, noteDispute, noteRefund } from './ledger'
 
 /**
  * Takes a message of the payments service. Its signature is checked over the very bytes that came; a message that was
@@ -75,9 +75,12 @@ async function handle(trx: Knex.Transaction, message: Stripe.Event, moment: Mome
       return declined(trx, message.data.object, moment)
     case 'refund.created':
     case 'refund.updated':
+    case 'refund.failed':
       return refunded(trx, message.data.object, moment)
     case 'charge.dispute.created':
       return disputed(trx, message.data.object, moment)
+    case 'charge.dispute.closed':
+      return disputeClosed(trx, message.data.object, moment)
   }
 }
 
@@ -105,11 +108,19 @@ async function declined(trx: Knex.Transaction, intent: Stripe.PaymentIntent, mom
 
 async function refunded(trx: Knex.Transaction, refund: Stripe.Refund, moment: Moment): Promise<void> {
   const charge = await chargeOf(trx, refund.payment_intent)
-  if (!charge || refund.status === 'failed' || refund.status === 'canceled') return
-  await noteRefund(trx, charge.entry_id, { providerId: refund.id, amountMinor: refund.amount, currency: refund.currency.toUpperCase(), checkoutId: charge.checkout_id }, moment)
+  if (!charge) return
+  const moved = { providerId: refund.id, amountMinor: refund.amount, currency: refund.currency.toUpperCase(), checkoutId: charge.checkout_id }
+  if (refund.status === 'failed' || refund.status === 'canceled') await noteComeBack(trx, charge.entry_id, moved, 'fee_refund_failed', moment)
+  else await noteRefund(trx, charge.entry_id, moved, moment)
 }
 
 async function disputed(trx: Knex.Transaction, dispute: Stripe.Dispute, moment: Moment): Promise<void> {
   const charge = await chargeOf(trx, dispute.payment_intent)
   if (charge) await noteDispute(trx, charge.entry_id, { providerId: dispute.id, amountMinor: dispute.amount, currency: dispute.currency.toUpperCase(), checkoutId: charge.checkout_id }, moment)
+}
+
+async function disputeClosed(trx: Knex.Transaction, dispute: Stripe.Dispute, moment: Moment): Promise<void> {
+  const charge = await chargeOf(trx, dispute.payment_intent)
+  if (!charge || dispute.status !== 'won') return
+  await noteComeBack(trx, charge.entry_id, { providerId: dispute.id, amountMinor: dispute.amount, currency: dispute.currency.toUpperCase(), checkoutId: charge.checkout_id }, 'fee_dispute_won', moment)
 }

@@ -15,7 +15,8 @@ export type RefundReason = 'withdrawn' | 'paid_twice' | 'arrived_after_end'
 export async function queueRefund(trx: Knex.Transaction, entryId: number, reason: RefundReason, moment: Moment): Promise<number> {
   const open = await payments.findOpenCheckout(trx, entryId)
   if (open) await cancelCheckout(trx, open, moment)
-  const charges = (await payments.listLedger(trx, entryId)).filter(row => row.kind === 'charge')
+  // A charge with a reason is money that came back to us; the payment itself is booked without one.
+  const charges = (await payments.listLedger(trx, entryId)).filter(row => row.kind === 'charge' && row.reason === null)
   let asked = 0
   for (const charge of charges) asked += await refundCharge(trx, charge, reason, moment)
   return asked

@@ -32,7 +32,8 @@ export function isItsJudge(actor: Actor, entry: EntryAccess): boolean {
 }
 
 /** Drafts and animals on the bench are between entrant and measurer; the office meets an entry when it is submitted. */
-const BEFORE_THE_OFFICE: readonly State[] = ['draft', 'measuring', 'certified']
+/** A certified animal is the entrant's to submit, but its fee may be paid at the office, which then has to find it. */
+const BEFORE_THE_OFFICE: readonly State[] = ['draft', 'measuring']
 
 /** Who may read an entry's file at all; a stake bars from acting, and what of the file is shown is the presenter's. */
 export function canReadEntry(actor: Actor, entry: EntryAccess): boolean {

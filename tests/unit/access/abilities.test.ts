@@ -77,7 +77,7 @@ describe('who may', () => {
       expect(canReadEntry(who(9, 'entrant', 'shop', 'measurer', 'judge'), entry({ state }))).toBe(false)
       expect(canReadEntry(null, entry({ state }))).toBe(false)
     }
-    expect(states(state => canReadEntry(who(9, 'reviewer'), entry({ state })))).toEqual(STATES.filter(state => !['draft', 'measuring', 'certified'].includes(state)))
+    expect(states(state => canReadEntry(who(9, 'reviewer'), entry({ state })))).toEqual(STATES.filter(state => !['draft', 'measuring'].includes(state)))
     expect(canReadEntry(who(5, 'shop'), entry({ ownerUserId: null, begunByUserId: 5 }))).toBe(true)
   })
 

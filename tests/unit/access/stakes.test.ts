@@ -66,6 +66,9 @@ describe('the same name or address needs a word', () => {
     expect(like(both, [{ ...cleared, userId: 8 }])).toHaveLength(2)
     expect(like({ nameKey: 'tarnley wren' }, [{ ...cleared, nameKey: 'other' }])).toHaveLength(1)
     expect(like({ addressKey: '4 mill rd' }, [{ ...cleared, kind: 'address', addressKey: 'other' }])).toHaveLength(1)
+    // Whatever else the two are alike or unlike in.
+    expect(like({ nameKey: 'tarnley wren' }, [{ ...cleared, addressKey: 'another' }])).toEqual([])
+    expect(like({ addressKey: '4 mill rd' }, [{ ...cleared, kind: 'address', nameKey: 'another' }])).toEqual([])
   })
 
   test('only a likeness can be cleared', () => {
