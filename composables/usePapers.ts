@@ -10,6 +10,7 @@ export function usePapers(papers: MaybeRefOrGetter<readonly FilePaper[]>) {
       pages: Array.from({ length: paper.pages }, (_, page) => `${base}/picture?page=${page + 1}`),
       thumb: paper.pages > 0 ? `${base}/thumbnail` : null,
       original: `${base}/original`,
+      scanned: paper.scanned,
     }
   }))
 }

@@ -8,7 +8,7 @@ import path from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { ensureBuild } from './build.mjs'
 import { childEnvironment, urlHost } from './lib/childEnvironment.mjs'
-import { installMariadbServer } from './lib/debian.mjs'
+import { installMariadbServer, offerPoppler } from './lib/debian.mjs'
 import { readEnvironment } from './lib/environment.mjs'
 import { ensurePackages } from './lib/packages.mjs'
 import { whyNotListen } from './lib/ports.mjs'
@@ -63,6 +63,7 @@ async function start() {
   }
   // First of all: whoever may not install it is told at once, not after a minute of packages.
   if (wishes.databaseUrl === null && !hasMariadb()) await installMariadbServer()
+  await offerPoppler()
   await ensurePackages(ROOT)
 
   const environment = childEnvironment(wishes, instance)

@@ -1,6 +1,6 @@
 import { existsSync } from 'node:fs'
-import { StartError, step } from './report.mjs'
-import { accountIds, run } from './processes.mjs'
+import { say, StartError, step } from './report.mjs'
+import { accountIds, onPath, run } from './processes.mjs'
 
 const ENV = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' }
 
@@ -31,6 +31,18 @@ export async function installDebian(packages, what, named) {
       throw new StartError(`${hint}; installing it here failed: ${last}`)
     }
   })
+}
+
+/** Poppler's programs, which make pictures of the pages of PDF papers; without them the registry runs, and says so. */
+export async function offerPoppler() {
+  if (onPath('pdftoppm')) return
+  try {
+    await installDebian(['poppler-utils'], 'pdftoppm, which makes pictures of PDF papers,', 'poppler-utils')
+  }
+  catch (error) {
+    if (!(error instanceof StartError)) throw error
+    say('  pdftoppm is missing (Debian package poppler-utils): papers in PDF are kept, but not shown page by page')
+  }
 }
 
 /**

@@ -1,6 +1,6 @@
 import { createHash, randomUUID } from 'node:crypto'
 import { createReadStream, createWriteStream } from 'node:fs'
-import { mkdir, open, readdir, rm, stat } from 'node:fs/promises'
+import { mkdir, open, readdir, rm, stat, utimes } from 'node:fs/promises'
 import path from 'node:path'
 import type { Readable } from 'node:stream'
 import { pipeline } from 'node:stream/promises'
@@ -94,7 +94,7 @@ export class FileStorage {
   async keep(incoming: Incoming): Promise<Kept> {
     const storageKey = storageKeyOf(incoming.sha256)
     try {
-      if (await this.#disk.exists(storageKey)) await rm(incoming.path, { force: true })
+      if (await this.#refresh(storageKey)) await rm(incoming.path, { force: true })
       else {
         await sync(incoming.path)
         await this.#disk.moveFromFs(incoming.path, storageKey)
@@ -105,6 +105,20 @@ export class FileStorage {
       throw away(error)
     }
     return { sha256: incoming.sha256, size: incoming.size, storageKey }
+  }
+
+  /**
+   * Makes a file that is there already as young as a new one, so that the sweeper leaves it until its row is written.
+   *
+   * @returns false where it is not there, or where only writing it again can do that, as in a bucket
+   */
+  async #refresh(storageKey: string): Promise<boolean> {
+    if (this.#root === null) return false
+    const now = new Date()
+    return utimes(path.join(this.#root, storageKey), now, now).then(() => true, (error: NodeJS.ErrnoException) => {
+      if (error.code === 'ENOENT') return false
+      throw error
+    })
   }
 
   /** Keeps bytes that were made here, such as a picture that was turned upright. */

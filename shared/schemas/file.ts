@@ -27,6 +27,8 @@ export interface FilePaper {
   readonly mime: string
   /** pictures of it: 1 for a photograph, 0 for a PDF of which none could be made */
   readonly pages: number
+  /** whether a scanner looked through it and found nothing */
+  readonly scanned: boolean
   readonly uploadedAt: string
 }
 

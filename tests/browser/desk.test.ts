@@ -27,22 +27,25 @@ const sittingAt = async (state: string) => (await app.db('sittings as s').join('
 
 describe('the desk\'s pages fit every width in light and dark, and axe finds nothing', () => {
   test.each([
-    ['home-entrant', 'entrant', async () => '/desk'],
-    ['home-measurer', 'measurer', async () => '/desk'],
-    ['home-reviewer', 'reviewer', async () => '/desk'],
-    ['home-judge', 'judge1', async () => '/desk'],
-    ['home-registrar', 'registrar', async () => '/desk'],
-    ['bench', 'measurer', async () => '/desk/bench'],
-    ['bench-sheet', 'measurer', async () => `/desk/bench/${await entryAt('measuring', { 'e.measurer_user_id': await idOf('measurer') })}`],
-    ['office', 'reviewer', async () => '/desk/office'],
-    ['office-file', 'reviewer', async () => `/desk/office/${await entryAt('in_review')}`],
-    ['office-file-returned', 'reviewer2', async () => `/desk/office/${await entryAt('returned')}`],
-    ['panel', 'judge1', async () => '/desk/panel'],
-    ['sitting', 'judge1', async () => `/desk/panel/${(await sittingAt('planned')).uid}`],
-    ['ballot', 'judge1', async () => Object.values(await sittingAt('planned')).reduce((path, part) => `${path}/${part}`, '/desk/panel')],
-    ['panel-new', 'reviewer', async () => '/desk/panel/new'],
-    ['minutes', 'judge1', async () => `/desk/panel/${(await sittingAt('closed')).uid}/minutes`],
-    ['mailbox', 'registrar', async () => '/mailbox'],
+    ['home-entrant', 'entrant', async (): Promise<string> => '/desk'],
+    ['home-measurer', 'measurer', async (): Promise<string> => '/desk'],
+    ['home-reviewer', 'reviewer', async (): Promise<string> => '/desk'],
+    ['home-judge', 'judge1', async (): Promise<string> => '/desk'],
+    ['home-registrar', 'registrar', async (): Promise<string> => '/desk'],
+    ['bench', 'measurer', async (): Promise<string> => '/desk/bench'],
+    ['bench-sheet', 'measurer', async (): Promise<string> => `/desk/bench/${await entryAt('measuring', { 'e.measurer_user_id': await idOf('measurer') })}`],
+    ['office', 'reviewer', async (): Promise<string> => '/desk/office'],
+    ['office-file', 'reviewer', async (): Promise<string> => `/desk/office/${await entryAt('in_review')}`],
+    ['office-file-returned', 'reviewer2', async (): Promise<string> => `/desk/office/${await entryAt('returned')}`],
+    ['panel', 'judge1', async (): Promise<string> => '/desk/panel'],
+    ['sitting', 'judge1', async (): Promise<string> => `/desk/panel/${(await sittingAt('planned')).uid}`],
+    ['ballot', 'judge1', async (): Promise<string> => {
+      const { uid, entry } = await sittingAt('planned')
+      return `/desk/panel/${uid}/${entry}`
+    }],
+    ['panel-new', 'reviewer', async (): Promise<string> => '/desk/panel/new'],
+    ['minutes', 'reviewer', async (): Promise<string> => `/desk/panel/${(await sittingAt('closed')).uid}/minutes`],
+    ['mailbox', 'registrar', async (): Promise<string> => '/mailbox'],
   ] as const)('%s', async (name, mail, path) => {
     const page = await browser.open({ as: await signedIn(mail) })
     await visit(page, await path())

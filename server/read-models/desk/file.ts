@@ -5,8 +5,8 @@ import { isoTime } from '../../../db/time'
 export async function papersOf(db: Knex, entryId: number) {
   const rows = await db('documents as d').join('files as f', 'f.id', 'd.file_id')
     .where('d.entry_id', entryId).whereNull('d.removed_at').whereNot('d.scan_state', 'infected')
-    .orderBy('d.sort').orderBy('d.id').select('d.uid', 'd.kind', 'd.name', 'd.pages', 'd.created_at', 'f.mime')
-  return rows.map(row => ({ id: row.uid as string, kind: row.kind, name: row.name as string, mime: row.mime as string, pages: row.mime.startsWith('image/') ? 1 : Number(row.pages ?? 0), uploadedAt: isoTime(row.created_at) }))
+    .orderBy('d.sort').orderBy('d.id').select('d.uid', 'd.kind', 'd.name', 'd.pages', 'd.created_at', 'd.scan_state', 'f.mime')
+  return rows.map(row => ({ id: row.uid as string, kind: row.kind, name: row.name as string, mime: row.mime as string, pages: row.mime.startsWith('image/') ? 1 : Number(row.pages ?? 0), scanned: row.scan_state === 'clean', uploadedAt: isoTime(row.created_at) }))
 }
 
 /** The statement that stands, with whoever signed it. */
