@@ -1,3 +1,4 @@
+import { dateFormat } from '#shared/intl'
 import type { Role } from '#shared/domain/access/roles'
 
 /** The own account, as `/api/account` says it. */
@@ -22,7 +23,7 @@ export function useWrittenDates() {
   const { locale } = useI18n()
   const { me } = useMe()
   return {
-    day: (iso: string) => new Intl.DateTimeFormat(locale.value, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${iso}T00:00:00Z`)),
-    instant: (iso: string) => new Intl.DateTimeFormat(locale.value, { dateStyle: 'long', timeStyle: 'short', timeZone: me.value?.registry.timeZone || 'UTC' }).format(new Date(iso)),
+    day: (iso: string) => dateFormat(locale.value, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${iso}T00:00:00Z`)),
+    instant: (iso: string) => dateFormat(locale.value, { dateStyle: 'long', timeStyle: 'short', timeZone: me.value?.registry.timeZone || 'UTC' }).format(new Date(iso)),
   }
 }

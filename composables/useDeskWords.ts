@@ -1,3 +1,4 @@
+import { dateFormat, listFormat, numberFormat } from '#shared/intl'
 import type { DeskLine } from '#shared/schemas/desk'
 
 /** How the desk says classes, days, dates and money in the reader's language and the registry's zone. */
@@ -12,19 +13,19 @@ export function useDeskWords() {
   const left = (count: number) => count < 0 ? t('desk.overdue', { count: -count }, -count) : t('common.daysLeft', { count }, count)
 
   /** A day (`YYYY-MM-DD`), written out. */
-  const date = (day: string) => new Intl.DateTimeFormat(locale.value, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${day}T00:00:00Z`))
+  const date = (day: string) => dateFormat(locale.value, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${day}T00:00:00Z`))
   /** An instant as a day, and with its time of day, in the registry's zone. */
-  const dayOf = (at: string) => new Intl.DateTimeFormat(locale.value, { dateStyle: 'long', timeZone: zone() }).format(new Date(at))
-  const time = (at: string) => new Intl.DateTimeFormat(locale.value, { dateStyle: 'long', timeStyle: 'short', timeZone: zone() }).format(new Date(at))
+  const dayOf = (at: string) => dateFormat(locale.value, { dateStyle: 'long', timeZone: zone() }).format(new Date(at))
+  const time = (at: string) => dateFormat(locale.value, { dateStyle: 'long', timeStyle: 'short', timeZone: zone() }).format(new Date(at))
   /** A date as far as it is known: `YYYY`, `YYYY-MM`, `YYYY-MM-DD` or `unknown`. */
   function inexact(text: string | null): string {
     if (!text || text === 'unknown') return t('desk.unknownDate')
     if (text.length === 4) return text
     if (text.length === 10) return date(text)
-    return new Intl.DateTimeFormat(locale.value, { month: 'long', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${text}-01T00:00:00Z`))
+    return dateFormat(locale.value, { month: 'long', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${text}-01T00:00:00Z`))
   }
-  const money = (minor: number, currency: string) => new Intl.NumberFormat(locale.value, { style: 'currency', currency }).format(minor / 100)
-  const list = (items: readonly string[]) => new Intl.ListFormat(locale.value, { type: 'conjunction' }).format(items)
+  const money = (minor: number, currency: string) => numberFormat(locale.value, { style: 'currency', currency }).format(minor / 100)
+  const list = (items: readonly string[]) => listFormat(locale.value).format(items)
 
   return { category, species, days, left, date, dayOf, time, inexact, money, list }
 }

@@ -1,3 +1,4 @@
+import { dateFormat, numberFormat } from '#shared/intl'
 import type { FacetsAnswer, RecordLine } from '#shared/schemas/records'
 
 /** How the public room says classes, dates, counts and what a list holds. */
@@ -9,16 +10,16 @@ export function useRecordWords() {
   const method = (id: string) => named('names.methods', id)
   const origin = (id: string) => named('names.origins', id)
   const sex = (id: string) => named('names.sexes', id)
-  const number = (value: number) => new Intl.NumberFormat(locale.value).format(value)
+  const number = (value: number) => numberFormat(locale.value).format(value)
   const count = (value: number) => t('records.count', { n: number(value) }, value)
 
   /** A day (`YYYY-MM-DD`), written out. */
-  const day = (text: string) => new Intl.DateTimeFormat(locale.value, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${text}T00:00:00Z`))
+  const day = (text: string) => dateFormat(locale.value, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${text}T00:00:00Z`))
   /** The public part of a date of taking: `YYYY`, `YYYY-MM` or null. */
   function taken(text: string | null): string {
     if (text === null) return t('records.unknownYear')
     if (text.length === 4) return text
-    return new Intl.DateTimeFormat(locale.value, { month: 'long', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${text}-01T00:00:00Z`))
+    return dateFormat(locale.value, { month: 'long', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${text}-01T00:00:00Z`))
   }
   const hunter = (line: Pick<RecordLine, 'hunter'>) => line.hunter || t('records.withheld')
 

@@ -1,3 +1,5 @@
+import { dateFormat } from '../shared/intl'
+
 /** Where the time comes from. SQL never asks the database server for it, so that tests and demo data can set it. */
 export interface Clock {
   now(): Date
@@ -16,5 +18,5 @@ export function fixedClock(start: Date | string): Clock & { set(to: Date | strin
 
 /** The calendar day (`YYYY-MM-DD`) of an instant in a time zone: the registry's zone decides days. */
 export function dayIn(zone: string, instant: Date): string {
-  return new Intl.DateTimeFormat('en-CA', { timeZone: zone, year: 'numeric', month: '2-digit', day: '2-digit' }).format(instant)
+  return dateFormat('en-CA', { timeZone: zone, year: 'numeric', month: '2-digit', day: '2-digit' }).format(instant)
 }

@@ -34,3 +34,16 @@ export async function withIdempotency<R>(event: H3Event, registry: Registry, act
     throw error
   }
 }
+
+/**
+ * An id for what a request makes, always the same under the same `Idempotency-Key` of the same account (UUID version 8,
+ * RFC 9562, section 5.8): should the process die between making it and keeping the answer, the repetition finds it made.
+ */
+export function idUnderKey(event: H3Event, actor: Exclude<Actor, null>): string | undefined {
+  const key = getRequestHeader(event, 'idempotency-key')
+  if (!key) return undefined
+  const bytes = createHash('sha256').update(JSON.stringify([actor.uid, event.path.split('?')[0], key])).digest().subarray(0, 16)
+  bytes[6] = 0x80 | (bytes[6]! & 0x0F)
+  bytes[8] = 0x80 | (bytes[8]! & 0x3F)
+  return bytes.toString('hex').replace(/^(.{8})(.{4})(.{4})(.{4})/, '$1-$2-$3-$4-')
+}

@@ -55,6 +55,16 @@ describe('beginning an entry', () => {
     const otherPerson = await create(other, FACTS).set('idempotency-key', 'one-and-the-same')
     expect(otherPerson.body.id).not.toBe(first.body.id)
   })
+
+  it('makes one entry under one key, even where the process died before it kept the answer', async () => {
+    const send = () => create(owner, FACTS).set('idempotency-key', 'killed-in-between')
+    const first = await send()
+    // What a kill -9 between the two commits leaves: the entry, and a key without an answer that is let go after a while.
+    await app.db('idempotency_keys').where({ key: 'killed-in-between' }).delete()
+    const again = await send()
+    expect([again.status, again.body.id]).toEqual([201, first.body.id])
+    expect(await app.db('entries').where({ uid: first.body.id }).select('id')).toHaveLength(1)
+  })
 })
 
 describe('changing an entry', () => {

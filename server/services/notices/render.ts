@@ -1,3 +1,4 @@
+import { dateFormat, numberFormat } from '../../../shared/intl'
 import type { Settings } from '../settings/read'
 import { t } from '../texts/translate'
 import { layoutHtml, layoutText, type Letter } from '../../mail/layout'
@@ -57,10 +58,10 @@ function paragraphsOf(locale: string, key: string, values: Readonly<Record<strin
 function say(value: NoticeValue, { locale, settings }: RenderContext): string {
   if (value === null) return ''
   if (typeof value === 'string') return withoutControls(value)
-  if (typeof value === 'number') return new Intl.NumberFormat(locale).format(value)
+  if (typeof value === 'number') return numberFormat(locale).format(value)
   if ('text' in value) return t(locale, value.text, value.params)
-  if ('day' in value) return new Intl.DateTimeFormat(locale, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${value.day}T00:00:00Z`))
-  if ('instant' in value) return new Intl.DateTimeFormat(locale, { dateStyle: 'long', timeStyle: 'short', timeZone: settings.timeZone }).format(new Date(value.instant))
+  if ('day' in value) return dateFormat(locale, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(`${value.day}T00:00:00Z`))
+  if ('instant' in value) return dateFormat(locale, { dateStyle: 'long', timeStyle: 'short', timeZone: settings.timeZone }).format(new Date(value.instant))
   return value.list.map(line => `– ${oneLine(withoutControls(line))}`).join('\n')
 }
 
