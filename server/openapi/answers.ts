@@ -23,6 +23,7 @@ export const ANSWERS: Readonly<Record<string, Answer>> = {
   'GET /api/records': { schema: recordsAnswer, cached: true },
   'GET /api/records/facets': { schema: facetsAnswer, cached: true },
   'GET /api/records/{recordNo}': { schema: recordAnswer, cached: true },
+  'GET /api/records/[recordNo]/drawing': { schema: z.string(), media: 'image/svg+xml', cached: true },
   'GET /api/records.csv': { schema: z.string(), media: 'text/csv', cached: true },
   'GET /api/measurers': { schema: measurersAnswer, cached: true },
   'GET /api/categories': { schema: categoriesAnswer, cached: true },

@@ -226,3 +226,23 @@ describe('pages of the lists', () => {
     }
   })
 })
+
+describe('the drawing of a record', () => {
+  it('is an SVG by itself, in words too, and kept by its tag; there is none without a sheet', async () => {
+    const { record_no: withSheet } = (await app.db('records').whereNotNull('sheet_id').where('status', 'accepted').first('record_no'))!
+    const answer = await app.visitor.get(`/api/records/${withSheet}/drawing`).buffer(true).parse((response, done) => {
+      let text = ''
+      response.setEncoding('utf8')
+      response.on('data', (chunk: string) => (text += chunk))
+      response.on('end', () => done(null, text))
+    })
+    expect(answer.status).toBe(200)
+    expect(answer.headers['content-type']).toMatch(/^image\/svg\+xml/)
+    expect(answer.body).toMatch(/^<svg xmlns="http:\/\/www\.w3\.org\/2000\/svg"[^>]*role="img"><title>[^<]+<\/title>/)
+    expect(answer.body).not.toMatch(/NaN|Infinity|undefined|<script/)
+    expect((await app.visitor.get(`/api/records/${withSheet}/drawing`).set('if-none-match', answer.headers.etag!)).status).toBe(304)
+    expect((await app.visitor.get('/api/records/999999/drawing')).status).toBe(404)
+    const bare = await app.db('records').whereNull('sheet_id').where('status', 'accepted').first('record_no')
+    if (bare) expect((await app.visitor.get(`/api/records/${bare.record_no}/drawing`)).status).toBe(404)
+  })
+})

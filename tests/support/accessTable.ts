@@ -57,6 +57,7 @@ export const ROUTES: Readonly<Record<string, Who>> = {
   'GET /api/records.csv': 'anyone',
   'GET /api/records/facets': 'anyone',
   'GET /api/records/[recordNo]': 'anyone',
+  'GET /api/records/[recordNo]/drawing': 'anyone',
   'POST /api/records/[recordNo]/reports': 'signedIn',
   'GET /api/mailbox': 'anyone',
   'GET /api/mailbox/[id]': 'anyone',

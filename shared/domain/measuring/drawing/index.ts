@@ -9,6 +9,7 @@ import type { Box, Drawing, Part, Residual, View } from './types'
 
 export type { Box, Drawing, Part, Residual, View } from './types'
 export { small, SMALL_SIDE } from './small'
+export { grainOf, pathOf, svgOf, viewBoxOf } from './svg'
 
 const VIEWS: Readonly<Partial<Record<SheetDefinition['family'], View>>> = { sheep: 'sides', skull: 'above' }
 /** Inches that a drawn spread may be off before it is told; a share for long ones. */
