@@ -37,6 +37,7 @@ try {
 
   say(`\n${CONNECTIONS} connections, ${ROUNDS} rounds of ${SECONDS} s each in turn, best round; 50 lines of ${CATEGORY}`)
   await compare('list by API', `${ours}/api/records?category=${CATEGORY}`, `${bare}/api/list?class=${classId}`)
+  await compare('list as a page, made anew', `${ours}/records?category=${CATEGORY}`, `${bare}/?class=${classId}`, true)
   await compare('list as a page', `${ours}/records?category=${CATEGORY}`, `${bare}/?class=${classId}`)
   const [ourScripts, bareScripts] = [await scriptBytes(`${ours}/records?category=${CATEGORY}`), await scriptBytes(`${bare}/?class=${classId}`)]
   say(`client JavaScript of the page, gzip: ${kilobytes(ourScripts)}, bare ${kilobytes(bareScripts)}, ${kilobytes(ourScripts - bareScripts)} more`)
@@ -87,21 +88,29 @@ async function idOf(databaseUrl) {
   return /** @type {{ id: number }[]} */ (rows)[0]?.id ?? 0
 }
 
-/** @param {string} url @returns {Promise<{ perSecond: number, p99: number }>} */
-async function load(url) {
-  const result = await autocannon({ url, connections: CONNECTIONS, duration: SECONDS })
+let asked = 0
+/**
+ * @param {string} url
+ * @param {boolean} anew each request under an address of its own, so that no answer was made before
+ * @returns {Promise<{ perSecond: number, p99: number }>}
+ */
+async function load(url, anew) {
+  const { pathname, search } = new URL(url)
+  /** @type {import('autocannon').Request[]} */
+  const requests = [{ setupRequest: request => ({ ...request, path: `${pathname}${search}&asked=${asked++}` }) }]
+  const result = await autocannon({ url, connections: CONNECTIONS, duration: SECONDS, ...(anew ? { requests } : {}) })
   if (result.non2xx > 0 || result.errors > 0) throw new StartError(`${url}: ${result.non2xx} answers other than 2xx, ${result.errors} errors`)
   return { perSecond: result.requests.average, p99: result.latency.p99 }
 }
 
-/** @param {string} what @param {string} ours @param {string} bare */
-async function compare(what, ours, bare) {
+/** @param {string} what @param {string} ours @param {string} bare @param {boolean} anew */
+async function compare(what, ours, bare, anew = false) {
   const best = { ours: { perSecond: 0, p99: 0 }, bare: { perSecond: 0, p99: 0 } }
   await autocannon({ url: ours, connections: CONNECTIONS, duration: 3 })
   await autocannon({ url: bare, connections: CONNECTIONS, duration: 3 })
   for (let round = 0; round < ROUNDS; round++) {
     for (const [name, url] of /** @type {const} */ ([['ours', ours], ['bare', bare]])) {
-      const measured = await load(url)
+      const measured = await load(url, anew)
       if (measured.perSecond > best[name].perSecond) best[name] = measured
     }
   }

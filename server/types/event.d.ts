@@ -6,6 +6,8 @@ declare module 'h3' {
     /** The registry that the request's host leads to. */
     registry: Registry
     requestId: string
+    /** Under which a public page is kept once it was made. */
+    pageKey?: string
     /** Read once a request, by `actorOf`. */
     actor?: Promise<Actor>
   }

@@ -218,6 +218,20 @@ describe('pages of the lists', () => {
     }
   })
 
+  it('are made once for many readers, are the same for whoever is signed in, and change with the lists at once', async () => {
+    const path = '/records?category=moose&sort=gross'
+    const first = await get(path)
+    const again = await get(path)
+    const reader = await app.signInAs('registrar')
+    const signedIn = await reader.get(path)
+    expect([again.text, signedIn.text]).toEqual([first.text, first.text])
+    for (const name of ['content-security-policy', 'content-type', 'cache-control', 'etag', 'x-content-type-options']) expect(again.headers[name], name).toBe(first.headers[name])
+    const { entry_id: entryId } = (await app.db('records as r').join('classes as c', 'c.id', 'r.class_id').where({ 'r.status': 'accepted', 'c.code': 'moose' }).orderBy('r.gross16').first('r.entry_id'))!
+    await app.db.transaction(trx => markRecord(trx, entryId, 'challenged'))
+    expect((await get(path)).text).not.toBe(first.text)
+    await app.db.transaction(trx => markRecord(trx, entryId, 'accepted'))
+  })
+
   it('are not kept when they say that something is wrong', async () => {
     for (const [path, expected] of [['/records/4000000000', 404], ['/records?cursor=x', 422], ['/records?category=unicorn', 422]] as const) {
       const { status, headers } = await get(path).set('Accept', 'text/html')
