@@ -88,17 +88,13 @@ async function idOf(databaseUrl) {
   return /** @type {{ id: number }[]} */ (rows)[0]?.id ?? 0
 }
 
-let asked = 0
 /**
  * @param {string} url
  * @param {boolean} anew each request under an address of its own, so that no answer was made before
  * @returns {Promise<{ perSecond: number, p99: number }>}
  */
 async function load(url, anew) {
-  const { pathname, search } = new URL(url)
-  /** @type {import('autocannon').Request[]} */
-  const requests = [{ setupRequest: request => ({ ...request, path: `${pathname}${search}&asked=${asked++}` }) }]
-  const result = await autocannon({ url, connections: CONNECTIONS, duration: SECONDS, ...(anew ? { requests } : {}) })
+  const result = await autocannon({ url: anew ? `${url}&asked=[<id>]` : url, idReplacement: anew, connections: CONNECTIONS, duration: SECONDS })
   if (result.non2xx > 0 || result.errors > 0) throw new StartError(`${url}: ${result.non2xx} answers other than 2xx, ${result.errors} errors`)
   return { perSecond: result.requests.average, p99: result.latency.p99 }
 }
