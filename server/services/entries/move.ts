@@ -111,6 +111,12 @@ function assertVersion(entry: EntriesRow, version: number): void {
   if (version !== ANY_VERSION && entry.version !== version) throw new DomainError('version_conflict', { details: { version: entry.version } })
 }
 
+/** The ground that the ballots gave, where the panel's decision rests on one. */
+function panelGround({ actor, move, facts }: EffectContext): { ground?: string } {
+  const ground = facts.decision?.ground
+  return actor === null && ground && move.row.guards.includes('ground_and_reason') ? { ground } : {}
+}
+
 /** Runs the effects of a move that the rules allow, then writes state, event and notices. */
 export async function carryOut(effect: EffectContext): Promise<void> {
   const { trx, context, move, moment, patch, input } = effect
@@ -124,7 +130,7 @@ export async function carryOut(effect: EffectContext): Promise<void> {
     ...(moves ? { state: move.to, state_since: moment.at } : {}),
   })
   await appendEvent(trx, entry, {
-    kind: move.row.code, from: move.from, to: move.to, actor: effect.actor, args: effect.args,
+    kind: move.row.code, from: move.from, to: move.to, actor: effect.actor, args: { ...panelGround(effect), ...effect.args },
     texts: { comment: input.comment, reason: input.reason ?? (effect.actor ? undefined : effect.facts.decision?.reason), text: input.text, ...effect.texts },
   }, moment)
   await tellAll(effect)

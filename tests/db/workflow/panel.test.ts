@@ -166,6 +166,12 @@ describe('declined', () => {
     return uid
   }
 
+  test('the event keeps the ground of the ballots beside the reason', async () => {
+    const uid = await declined()
+    const event = (await on.registry.db('entry_events as v').join('entries as e', 'e.id', 'v.entry_id').where({ 'e.uid': uid, 'v.kind': 'decline' }).first('v.args'))!
+    expect(JSON.parse(event.args)).toMatchObject({ ground: 'altered_parts' })
+  })
+
   test('the appeal goes to another reviewer and other judges, once', async () => {
     const uid = await declined()
     await scene.move(scene.cast.entrant, uid, { transition: 'appeal', text: 'The parts are as grown.' })
