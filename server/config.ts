@@ -100,7 +100,7 @@ export function readConfig(env: Env): HartrollConfig {
   const s3 = env.DOCUMENTS_S3_BUCKET
     ? {
         bucket: env.DOCUMENTS_S3_BUCKET,
-        endpoint: required(env, 'DOCUMENTS_S3_ENDPOINT', 'DOCUMENTS_S3_BUCKET is set'),
+        endpoint: required({ DOCUMENTS_S3_ENDPOINT: url(env, 'DOCUMENTS_S3_ENDPOINT', ['http:', 'https:'])?.href }, 'DOCUMENTS_S3_ENDPOINT', 'DOCUMENTS_S3_BUCKET is set'),
         region: env.DOCUMENTS_S3_REGION ?? 'us-east-1',
         accessKeyId: required(env, 'DOCUMENTS_S3_ACCESS_KEY_ID', 'DOCUMENTS_S3_BUCKET is set'),
         secretAccessKey: required(env, 'DOCUMENTS_S3_SECRET_ACCESS_KEY', 'DOCUMENTS_S3_BUCKET is set'),

@@ -2,7 +2,7 @@ import type { StateRow, TransitionRow } from '#shared/domain/workflow/rows'
 import { STATES, WHOSE_TURN } from '#shared/domain/workflow/states'
 
 /** Number of the workflow version that these rows are. A change to what a row does is a new version. */
-export const WORKFLOW_VERSION = 1
+export const WORKFLOW_VERSION = 2
 
 export const WORKFLOW_STATES: readonly StateRow[] = STATES.map((code, place) => ({ code, turn: WHOSE_TURN[code], sort: place + 1 }))
 
@@ -43,7 +43,7 @@ const ROWS: readonly Omit<TransitionRow, 'sort'>[] = [
     from: ['in_review'], to: 'returned', parties: ['reviewer'], guards: ['open_request', 'no_stake'], effects: ['take_review', 'tell_entrant'],
   }),
   row('resubmit', {
-    from: ['returned'], to: 'in_review', parties: ['entrant'], guards: ['every_request_answered'], effects: ['tell_office'],
+    from: ['returned'], to: 'in_review', parties: ['entrant'], guards: ['every_request_answered', 'statement_signed'], effects: ['tell_office'],
   }),
   row('lapse', {
     from: ['returned', 'certified'], to: 'lapsed', parties: ['clock'], guards: ['untouched_long_enough', 'not_on_hold'],

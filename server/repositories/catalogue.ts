@@ -61,9 +61,13 @@ export async function findFee(db: Knex, classId: number, of: { version: number }
 
 export interface LedgerSums { readonly settled: number, readonly waived: boolean }
 
-/** What was paid for an entry less what went back, in minor units, and whether the fee was waived. */
-export async function sumLedger(db: Knex, entryId: number): Promise<LedgerSums> {
-  const rows = await db('ledger').where({ entry_id: entryId }).groupBy('kind').select('kind').sum({ amount: 'amount_minor' }) as { kind: string, amount: number | string }[]
+/**
+ * What was paid for an entry less what went back, in minor units, and whether the fee was waived.
+ *
+ * @param currency ISO 4217 of the fee; money in another is in the ledger and pays nothing
+ */
+export async function sumLedger(db: Knex, entryId: number, currency: string | null): Promise<LedgerSums> {
+  const rows = await db('ledger').where({ entry_id: entryId, ...currency === null ? {} : { currency } }).groupBy('kind').select('kind').sum({ amount: 'amount_minor' }) as { kind: string, amount: number | string }[]
   const of = (...kinds: string[]) => rows.filter(row => kinds.includes(row.kind)).reduce((sum, row) => sum + Number(row.amount), 0)
   return { settled: of('charge', 'office_payment') - of('refund', 'dispute'), waived: rows.some(row => row.kind === 'waiver') }
 }

@@ -1,6 +1,6 @@
 import { createHash, randomUUID } from 'node:crypto'
-import { createReadStream, createWriteStream } from 'node:fs'
-import { mkdir, open, readdir, rm, stat, utimes } from 'node:fs/promises'
+import { createWriteStream } from 'node:fs'
+import { mkdir, open, readdir, readFile, rm, stat, utimes, writeFile } from 'node:fs/promises'
 import path from 'node:path'
 import type { Readable } from 'node:stream'
 import { pipeline } from 'node:stream/promises'
@@ -24,6 +24,9 @@ export interface Kept {
   readonly storageKey: string
 }
 
+/** How long a bucket may keep silent before it is taken for away, in ms; it is asked twice. */
+const PATIENCE_MS = 8_000
+
 /** Keys tell the content: two files of the same bytes are one, and a file never changes. */
 export function storageKeyOf(sha256: string): string {
   return `${sha256.slice(0, 2)}/${sha256.slice(2, 4)}/${sha256}`
@@ -45,7 +48,7 @@ export class FileStorage {
   readonly #root: string | null
   readonly #incoming: string
 
-  constructor(config: HartrollConfig) {
+  constructor(config: HartrollConfig, { patienceMs = PATIENCE_MS } = {}) {
     // What comes in is counted and hashed on the local disk, wherever it is kept in the end.
     this.#incoming = path.join(filesDir(config), 'incoming')
     this.#root = config.s3 ? null : path.join(filesDir(config), 'kept')
@@ -58,6 +61,11 @@ export class FileStorage {
           forcePathStyle: true,
           supportsACL: false,
           visibility: 'private',
+          maxAttempts: 2,
+          requestHandler: { connectionTimeout: patienceMs, socketTimeout: patienceMs },
+          // Servers other than Amazon's know no bodies in chunks with a sum behind them; we send SHA-256 ourselves.
+          requestChecksumCalculation: 'WHEN_REQUIRED',
+          responseChecksumValidation: 'WHEN_REQUIRED',
         }))
       : new Disk(new FSDriver({ location: this.#root!, visibility: 'private' }))
   }
@@ -94,12 +102,13 @@ export class FileStorage {
   async keep(incoming: Incoming): Promise<Kept> {
     const storageKey = storageKeyOf(incoming.sha256)
     try {
-      if (await this.#refresh(storageKey)) await rm(incoming.path, { force: true })
-      else {
+      if (this.#root === null) await this.#send(incoming, storageKey)
+      else if (!await this.#refresh(this.#root, storageKey)) {
         await sync(incoming.path)
         await this.#disk.moveFromFs(incoming.path, storageKey)
-        await this.#syncFolder(storageKey)
+        await this.#syncFolder(this.#root, storageKey)
       }
+      await rm(incoming.path, { force: true })
     }
     catch (error) {
       throw away(error)
@@ -108,38 +117,43 @@ export class FileStorage {
   }
 
   /**
+   * Sends a file to the bucket, which compares it with our hash; again even where it is there already, since only that
+   * makes it young. It is sent from memory, so that a try that failed can be repeated.
+   */
+  async #send(incoming: Incoming, storageKey: string): Promise<void> {
+    await this.#disk.put(storageKey, await readFile(incoming.path), { ChecksumSHA256: Buffer.from(incoming.sha256, 'hex').toString('base64') })
+  }
+
+  /**
    * Makes a file that is there already as young as a new one, so that the sweeper leaves it until its row is written.
    *
-   * @returns false where it is not there, or where only writing it again can do that, as in a bucket
+   * @returns false where it is not there
    */
-  async #refresh(storageKey: string): Promise<boolean> {
-    if (this.#root === null) return false
+  async #refresh(root: string, storageKey: string): Promise<boolean> {
     const now = new Date()
-    return utimes(path.join(this.#root, storageKey), now, now).then(() => true, (error: NodeJS.ErrnoException) => {
+    return utimes(path.join(root, storageKey), now, now).then(() => true, (error: NodeJS.ErrnoException) => {
       if (error.code === 'ENOENT') return false
       throw error
     })
   }
 
-  /** Keeps bytes that were made here, such as a picture that was turned upright. */
+  /** Keeps bytes that were made here, such as a picture that was turned upright; what could not be kept leaves nothing. */
   async keepBytes(bytes: Buffer): Promise<Kept> {
     await mkdir(this.#incoming, { recursive: true }).catch(away)
-    const target = path.join(this.#incoming, randomUUID())
-    const handle = await open(target, 'wx', 0o600).catch(away)
+    const incoming = { path: path.join(this.#incoming, randomUUID()), size: bytes.length, sha256: createHash('sha256').update(bytes).digest('hex') }
     try {
-      await handle.writeFile(bytes)
+      await writeFile(incoming.path, bytes, { flag: 'wx', mode: 0o600 }).catch(away)
+      return await this.keep(incoming)
     }
     finally {
-      await handle.close()
+      await this.discard(incoming)
     }
-    return this.keep({ path: target, size: bytes.length, sha256: createHash('sha256').update(bytes).digest('hex') })
   }
 
-  async #syncFolder(storageKey: string): Promise<void> {
-    if (this.#root === null) return
+  async #syncFolder(root: string, storageKey: string): Promise<void> {
     // A file is there after a power cut only when its folder says so.
     for (let folder = path.dirname(storageKey); ; folder = path.dirname(folder)) {
-      await sync(path.join(this.#root, folder))
+      await sync(path.join(root, folder))
       if (folder === '.') return
     }
   }
@@ -148,20 +162,28 @@ export class FileStorage {
     await rm(incoming.path, { force: true })
   }
 
-  /** @throws DomainError `storage_away` */
+  /**
+   * A stream over a kept file, open before it is given: what cannot be read is refused here, not in mid-answer.
+   *
+   * @throws DomainError `storage_away`, also for a file that is not there although it should be
+   */
   async read(storageKey: string): Promise<Readable> {
-    return this.#disk.getStream(storageKey).catch(away)
+    if (this.#root === null) return this.#disk.getStream(storageKey).catch(away)
+    return (await open(path.join(this.#root, storageKey), 'r').catch(away)).createReadStream()
   }
 
-  /** Size in bytes, or null where there is no such file. */
+  /**
+   * Size in bytes, or null where there is no such file.
+   *
+   * @throws DomainError `storage_away`
+   */
   async size(storageKey: string): Promise<number | null> {
-    if (!await this.#disk.exists(storageKey)) return null
-    return (await this.#disk.getMetaData(storageKey)).contentLength
-  }
-
-  /** A kept file under a path of this machine, for programs that read files; null in a bucket. */
-  localPath(storageKey: string): string | null {
-    return this.#root === null ? null : path.join(this.#root, storageKey)
+    try {
+      return await this.#disk.exists(storageKey) ? (await this.#disk.getMetaData(storageKey)).contentLength : null
+    }
+    catch (error) {
+      throw away(error)
+    }
   }
 
   /**
@@ -169,6 +191,7 @@ export class FileStorage {
    *
    * @param known tells which of some SHA-256 have a row
    * @returns how many were removed
+   * @throws DomainError `storage_away`
    */
   async sweep(before: Date, known: (sha256: readonly string[]) => Promise<ReadonlySet<string>>): Promise<number> {
     let removed = 0
@@ -179,9 +202,21 @@ export class FileStorage {
       await rm(file, { force: true })
       removed++
     }
+    // Nothing was kept yet: the folder comes with the first file.
+    if (this.#root !== null && await stat(this.#root).catch(() => null) === null) return removed
+    try {
+      return removed + await this.#sweepKept(before, known)
+    }
+    catch (error) {
+      throw away(error)
+    }
+  }
+
+  async #sweepKept(before: Date, known: (sha256: readonly string[]) => Promise<ReadonlySet<string>>): Promise<number> {
+    let removed = 0
     let token: string | undefined
     do {
-      const page = await this.#disk.listAll('', { recursive: true, ...(token ? { paginationToken: token } : {}) }).catch(() => ({ objects: [], paginationToken: undefined }))
+      const page = await this.#disk.listAll('', { recursive: true, ...(token ? { paginationToken: token } : {}) })
       const keys = [...page.objects].flatMap(one => one.isFile ? [one.key] : [])
       const rows = await known(keys.map(key => path.basename(key)))
       for (const key of keys.filter(key => !rows.has(path.basename(key)))) {
@@ -195,13 +230,13 @@ export class FileStorage {
   }
 }
 
-/** A stream over a file that came in, for looking at its content. */
-export const openIncoming = (incoming: Incoming): Readable => createReadStream(incoming.path)
-
 function isDiskFull(error: unknown): boolean {
   return ['ENOSPC', 'EDQUOT', 'EROFS', 'EACCES'].includes((error as NodeJS.ErrnoException).code ?? '')
 }
 
+/** What went wrong for the caller, and for the log with the reason beneath: the disk's own errors name only the key. */
 function away(error: unknown): never {
-  throw error instanceof DomainError ? error : new DomainError('storage_away', { logLine: (error as Error).message, cause: error })
+  if (error instanceof DomainError) throw error
+  const { message, cause } = error as Error
+  throw new DomainError('storage_away', { logLine: cause instanceof Error ? `${message}: ${cause.message || cause.name}` : message, cause: error })
 }

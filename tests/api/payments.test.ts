@@ -113,6 +113,32 @@ describe('messages of the payments service', () => {
     expect(await kinds()).toEqual(['charge'])
   })
 
+  test('of less than the fee: booked as what it is, the rest stays open and the next page asks for the rest alone', async () => {
+    const session = await sessionOf()
+    await message('checkout.session.completed', { ...session, amount_total: 1500 })
+    expect(await money()).toMatchObject({ dueMinor: 4000, settledMinor: 1500, openMinor: 2500 })
+    await pageOf()
+    const next = await app.db('checkouts as c').join('entries as e', 'e.id', 'c.entry_id').where({ 'e.uid': uid, 'c.state': 'open' }).first('c.amount_minor')
+    expect(next).toEqual({ amount_minor: 2500 })
+  })
+
+  test('in a currency that is not the fee\'s: booked, asked back, and nothing is paid by it', async () => {
+    await message('checkout.session.completed', { ...await sessionOf(), currency: 'jpy' })
+    expect(await money()).toMatchObject({ settledMinor: 0, openMinor: 4000, lines: [{ kind: 'charge', currency: 'JPY', amountMinor: 4000 }] })
+    const asked = await app.db('payment_commands as c').join('entries as e', 'e.id', 'c.entry_id').where({ 'e.uid': uid, 'c.kind': 'refund' }).first('c.payload')
+    expect(JSON.parse(asked!.payload)).toMatchObject({ amount: 4000, currency: 'JPY', reason: 'other_currency' })
+    expect(await pageOf()).toMatch(/^\/pay\//)
+  })
+
+  test('paid a second time on another page: booked, and the second given back', async () => {
+    const session = await sessionOf()
+    await message('checkout.session.completed', session)
+    await message('checkout.session.completed', { ...session, payment_intent: `pi_again_${uid}` })
+    expect(await kinds()).toEqual(['charge', 'charge'])
+    const asked = await app.db('payment_commands as c').join('entries as e', 'e.id', 'c.entry_id').where({ 'e.uid': uid, 'c.kind': 'refund' }).select('c.payload')
+    expect(asked.map(row => JSON.parse(row.payload))).toMatchObject([{ charge: `pi_again_${uid}`, reason: 'paid_twice' }])
+  })
+
   test('after a withdrawal the money is booked and given back by itself', async () => {
     const session = await sessionOf()
     await scene.move(scene.cast.entrant, uid, { transition: 'withdraw', confirm: true })

@@ -1,6 +1,6 @@
 import { beforeAll, describe, expect, test } from 'vitest'
 import { useApp, type Client } from '../support/app'
-import { makeScene, type Scene } from '../support/scene'
+import { answerRequest, askRequest, makeScene, type Scene } from '../support/scene'
 
 const app = useApp()
 let scene: Scene
@@ -73,6 +73,43 @@ describe('a signature', () => {
     expect((await entrant.patch(`/api/entries/${id}`).set('if-match', `"${version}"`).send({ people: [{ part: 'hunter', name: 'Tove Wick' }] })).status).toBe(200)
     expect((await read(id)).signed).toMatchObject([{ name: 'Åse Wick', stands: false }])
     expect((await sign(id, 'hunter', 'Tove Wick')).body.signed.filter((one: { stands: boolean }) => one.stands)).toMatchObject([{ name: 'Tove Wick' }])
+  })
+
+  test.each([
+    ['takenOn', '2025-11-15', '2025-11-14'], ['district', 'brackwater', 'alderfall'], ['method', 'crossbow', 'rifle'], ['sex', 'female', 'male'], ['guided', true, false],
+    ['category', 'mule-deer-nontypical', 'mule-deer-typical'], ['origin', 'road_killed', 'hunted'],
+  ] as const)('no longer stands when the %s is another than was stated; saying the same again changes nothing', async (fact, other, same) => {
+    const id = await hunted([{ part: 'hunter', name: 'Åse Wick' }])
+    await sign(id, 'hunter', 'Åse Wick')
+    const change = async (facts: object) => entrant.patch(`/api/entries/${id}`).set('if-match', `"${(await entrant.get(`/api/entries/${id}`)).body.version}"`).send(facts)
+    expect((await change({ [fact]: same, driedFrom: 'taken', monthPublic: true })).status).toBe(200)
+    expect((await read(id)).signed).toMatchObject([{ stands: true }])
+    expect((await change({ [fact]: other })).status).toBe(200)
+    expect((await read(id)).signed).toMatchObject([{ stands: false }])
+    expect((await entrant.get(`/api/entries/${id}`)).body.statement.signedBy).toEqual([])
+  })
+
+  test('is wanted again before a fact that the office asked about goes back to it', async () => {
+    const id = await scene.entry('in_review')
+    const request = await askRequest(app.registry, scene.cast.reviewer, id, { kind: 'fact', text: 'Male or female?', wants: ['sex'] })
+    await scene.move(scene.cast.reviewer, id, { transition: 'return' })
+    const { version } = (await entrant.get(`/api/entries/${id}`)).body
+    expect((await entrant.patch(`/api/entries/${id}`).set('if-match', `"${version}"`).send({ sex: 'female' })).status).toBe(200)
+    await answerRequest(app.registry, scene.cast.entrant, id, request, 'Female, by the teeth.')
+    await expect(scene.move(scene.cast.entrant, id, { transition: 'resubmit' })).rejects.toMatchObject({ code: 'guard_failed', fields: [expect.objectContaining({ code: 'guard_statement_signed' })] })
+    expect((await sign(id, 'hunter', scene.cast.entrant.name)).status).toBe(200)
+    await scene.move(scene.cast.entrant, id, { transition: 'resubmit' })
+    expect(await scene.state(id)).toBe('in_review')
+  })
+
+  test('stands while the animal is only measured again: its facts are fixed', async () => {
+    const id = await scene.entry('in_review')
+    await scene.move(scene.cast.reviewer, id, { transition: 'recertify', comment: 'The spread reads wide.' })
+    const { version, may } = (await entrant.get(`/api/entries/${id}`)).body
+    expect(may.writeFacts).toBe(false)
+    const answer = await entrant.patch(`/api/entries/${id}`).set('if-match', `"${version}"`).send({ method: 'crossbow' })
+    expect(answer.body).toMatchObject({ status: 422, code: 'frozen_fact', errors: [{ path: 'method' }] })
+    expect((await read(id)).signed).toMatchObject([{ stands: true }])
   })
 
   test('cannot be given once the office has the entry', async () => {

@@ -6,7 +6,7 @@ import { hasOpenFacts } from '../../../shared/domain/workflow/states'
 import { DomainError } from '../../../shared/errors'
 import type { EntryFactsInput } from '../../../shared/schemas/entries'
 import type { Registry } from '../../composition'
-import { lockEntry, updateEntry } from '../../repositories/entries'
+import { lockEntry, updateEntry, type EntryPatch } from '../../repositories/entries'
 import { listPeople } from '../../repositories/entryPeople'
 import { listRequests, voidStatements } from '../../repositories/office'
 import type { Knex } from 'knex'
@@ -19,9 +19,19 @@ import { setPeople } from './people'
 /** Facts of the request under the names by which the office asks for them. */
 const ASKED_AS: Readonly<Record<string, string>> = { originalOrigin: 'origin', districtSide: 'district', monthPublic: 'takenOn', hunterName: 'hunter' }
 
+/** What the statement says is true: the animal, the day, and the way it came into human hands. */
+const STATED = [
+  'class_id', 'origin', 'original_origin', 'taken_first_on', 'taken_last_on', 'taken_precision', 'district_id', 'district_side', 'method', 'sex', 'guided',
+] as const
+
+/** Whether a patch makes something else of what was stated; the same said again does not. */
+function changesStated(entry: EntriesRow, patch: EntryPatch): boolean {
+  return STATED.some(column => column in patch && patch[column] !== entry[column])
+}
+
 /** After the first submission only what an open request names is the entrant's to change. */
 async function assertOpen(trx: Knex, entry: EntriesRow, given: readonly string[], parts: readonly string[]): Promise<void> {
-  if (hasOpenFacts(entry.state)) return
+  if (hasOpenFacts(entry.state, entry.return_to)) return
   const wanted = new Set((await listRequests(trx, entry.id)).filter(request => request.closed_at === null).flatMap(request => JSON.parse(request.wants) as string[]))
   const names = given.filter(name => name !== 'people')
   const frozen = [...names.filter(name => !wanted.has(ASKED_AS[name] ?? name)), ...parts.filter(part => !wanted.has(part)).map(() => 'people')]
@@ -49,9 +59,9 @@ export async function changeEntry(registry: Registry, actor: ActiveActor, uid: s
     await assertOpen(trx, entry, given, parts)
     if (category) await trx('animals').where({ id: entry.animal_id }).update({ species_id: category.species_id })
     await updateEntry(trx, entry.id, patch)
-    // What was signed for was another person's word.
-    if (parts.length > 0) await voidStatements(trx, entry.id, moment.at)
-    if (hasOpenFacts(entry.state)) return
+    // What was signed was that all of this is true as it stood.
+    if (parts.length > 0 || changesStated(entry, patch)) await voidStatements(trx, entry.id, moment.at)
+    if (hasOpenFacts(entry.state, entry.return_to)) return
     await appendEvent(trx, entry, { kind: 'change', actor, args: { changed: [...given, ...parts].sort() } }, moment)
   })
 }

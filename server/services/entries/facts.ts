@@ -68,7 +68,7 @@ async function loadSheetFacts(db: Knex, { entry, definition }: EntryContext): Pr
 /** What has to be paid for the entry; the fee's version is pinned at the first checkout. */
 async function loadFee(db: Knex, { entry, category }: EntryContext, moment: Moment) {
   const fee = await findFee(db, category.id, entry.fee_version === null ? { day: moment.today } : { version: entry.fee_version })
-  return { due: fee?.amount_minor ?? 0, ...await sumLedger(db, entry.id) }
+  return { due: fee?.amount_minor ?? 0, ...await sumLedger(db, entry.id, fee?.currency ?? null) }
 }
 
 /** Least net of a class for the entry: by the term pinned at the first submission, before that by the one in force. */

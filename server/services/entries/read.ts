@@ -3,6 +3,7 @@ import type { EntriesRow } from '../../../db/tables'
 import type { ActiveActor } from '../../../shared/domain/access/roles'
 import { canReadEntry, canWriteFacts, canWriteSheet, isOwner } from '../../../shared/domain/access/abilities'
 import { stakesOf } from '../../../shared/domain/access/stakes'
+import { hasOpenFacts } from '../../../shared/domain/workflow/states'
 import { nextActs } from '../../../shared/domain/workflow/transition'
 import { DomainError } from '../../../shared/errors'
 import type { Registry } from '../../composition'
@@ -58,7 +59,7 @@ export async function readEntry(registry: Registry, actor: ActiveActor, uid: str
     context, facts, workflow, moment, requests, sheets, district: district ?? null, isBlind, accounts,
     recordNo: record && (record.status === 'accepted' || record.status === 'challenged') ? record.record_no : null,
     as: owner ? 'owner' : bench ? 'bench' : 'staff',
-    canWriteFacts: canWriteFacts(actor, access),
+    canWriteFacts: canWriteFacts(actor, access) && (entry.state === 'returned' || hasOpenFacts(entry.state, entry.return_to)),
     canWriteSheet: canWriteSheet(actor, access),
     acts: nextActs(workflow.rows, facts, { kind: 'person', actor, keys }, { today: moment.today, limits: workflow.limits }),
   })

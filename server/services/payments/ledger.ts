@@ -1,9 +1,10 @@
 import type { Knex } from 'knex'
+import type { EntriesRow } from '../../../db/tables'
 import { lockEntryById } from '../../repositories/entries'
 import * as payments from '../../repositories/payments'
 import { appendEvent } from '../events/append'
 import { newUid, type Moment } from '../moment'
-import { feeStanding } from './feeStanding'
+import { feeStanding, type FeeStanding } from './feeStanding'
 import { refundCharge, type RefundReason } from './refund'
 import { tellOfMoney } from './tell'
 
@@ -19,9 +20,15 @@ export interface MoneyMoved {
 /** States in which a fee serves nothing any more, so that money which arrives goes back. */
 const ENDED = ['withdrawn', 'declined', 'struck']
 
+function whyNeedless(entry: EntriesRow, charge: MoneyMoved, before: FeeStanding): RefundReason | null {
+  if (ENDED.includes(entry.state)) return 'arrived_after_end'
+  if (before.currency !== null && charge.currency !== before.currency) return 'other_currency'
+  return before.open === 0 ? 'paid_twice' : null
+}
+
 /**
- * Books money that came. What arrives for an entry that has ended, or a second time, is asked back in the same
- * transaction.
+ * Books money that came. What arrives for an entry that has ended, in a currency that is not the fee's, or a second time is
+ * asked back in the same transaction. Less than the fee is booked as what it is: the rest stays open.
  */
 export async function noteCharge(trx: Knex.Transaction, entryId: number, charge: MoneyMoved, moment: Moment): Promise<void> {
   const entry = await lockEntryById(trx, entryId)
@@ -32,7 +39,7 @@ export async function noteCharge(trx: Knex.Transaction, entryId: number, charge:
     provider_id: charge.providerId, checkout_id: charge.checkoutId, at: moment.at,
   })
   await appendEvent(trx, entry, { kind: 'fee_paid', actor: null, args: { amount: charge.amountMinor, currency: charge.currency } }, moment)
-  const needless: RefundReason | null = ENDED.includes(entry.state) ? 'arrived_after_end' : before.open === 0 ? 'paid_twice' : null
+  const needless = whyNeedless(entry, charge, before)
   await tellOfMoney(trx, entry, 'fee_paid', charge.amountMinor, charge.currency, moment)
   if (needless) await refundCharge(trx, (await payments.findLedgerByProvider(trx, charge.providerId))!, needless, moment)
 }

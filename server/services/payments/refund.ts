@@ -4,7 +4,7 @@ import * as payments from '../../repositories/payments'
 import type { Moment } from '../moment'
 
 /** Why money goes back by itself. */
-export type RefundReason = 'withdrawn' | 'paid_twice' | 'arrived_after_end'
+export type RefundReason = 'withdrawn' | 'paid_twice' | 'arrived_after_end' | 'other_currency'
 
 /**
  * Asks for everything back that was paid online for an entry, and ends a checkout that is still open. Called under the

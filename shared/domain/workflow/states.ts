@@ -48,6 +48,11 @@ export function isLive(state: State): boolean {
   return (LIVE_STATES as readonly State[]).includes(state)
 }
 
-export function hasOpenFacts(state: State): boolean {
-  return (OPEN_FACTS_STATES as readonly State[]).includes(state)
+/**
+ * Whether an entry's facts are still its entrant's to change.
+ *
+ * @param returnTo where the entry goes back to; one that is only measured again, after it was submitted, keeps its facts
+ */
+export function hasOpenFacts(state: State, returnTo: State | null = null): boolean {
+  return returnTo === null && (OPEN_FACTS_STATES as readonly State[]).includes(state)
 }

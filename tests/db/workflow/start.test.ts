@@ -15,9 +15,9 @@ test('the seeded workflow can be used, with the registrar\'s own limits', async 
 test('the start refuses a row that names an unknown guard, and one without its quorum, in one line', async () => {
   const { guards } = (await on.registry.db('workflow_transitions').where({ code: 'accept' }).first('guards'))!
   await change('accept', { guards: JSON.stringify([...JSON.parse(guards) as string[], 'a_good_feeling']) })
-  await expect(assertWorkflowsUsable(on.registry.db)).rejects.toThrow('Workflow version 1 cannot be used: unknown_guard in accept: a_good_feeling')
+  await expect(assertWorkflowsUsable(on.registry.db)).rejects.toThrow('Workflow version 2 cannot be used: unknown_guard in accept: a_good_feeling')
   await change('accept', { guards: JSON.stringify((JSON.parse(guards) as string[]).filter(guard => guard !== 'quorum')) })
-  await expect(assertWorkflowsUsable(on.registry.db)).rejects.toThrow('Workflow version 1 cannot be used: guard_removed in accept: quorum')
+  await expect(assertWorkflowsUsable(on.registry.db)).rejects.toThrow('Workflow version 2 cannot be used: guard_removed in accept: quorum')
   await expect(loadCurrentWorkflow(on.registry.db)).rejects.toMatchObject({ code: 'internal' })
   await change('accept', { guards })
   await assertWorkflowsUsable(on.registry.db)

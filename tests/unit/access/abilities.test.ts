@@ -31,7 +31,8 @@ describe('states', () => {
   test('which are listed, live, open for facts', () => {
     expect(states(isListed)).toEqual(['accepted', 'challenged'])
     expect(states(isLive)).toEqual(['draft', 'measuring', 'certified', 'in_review', 'returned', 'at_panel', 'remeasuring', 'accepted', 'challenged'])
-    expect(states(hasOpenFacts)).toEqual(['draft', 'measuring', 'certified'])
+    expect(states(state => hasOpenFacts(state))).toEqual(['draft', 'measuring', 'certified'])
+    expect(states(state => hasOpenFacts(state, 'in_review'))).toEqual([])
     expect(isState('draft')).toBe(true)
     expect(isState('limbo')).toBe(false)
     expect(isState(1)).toBe(false)

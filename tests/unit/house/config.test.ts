@@ -40,6 +40,9 @@ describe('the environment', () => {
     [{ ...base, SMTP_URL: 'http://mail' }, 'SMTP_URL'],
     [{ ...base, STRIPE_SECRET_KEY: 'sk' }, 'STRIPE_WEBHOOK_SECRET'],
     [{ ...base, DOCUMENTS_S3_BUCKET: 'b' }, 'DOCUMENTS_S3_ENDPOINT'],
+    [{ ...base, DOCUMENTS_S3_BUCKET: 'b', DOCUMENTS_S3_ENDPOINT: 'files.example' }, 'DOCUMENTS_S3_ENDPOINT'],
+    [{ ...base, DOCUMENTS_S3_BUCKET: 'b', DOCUMENTS_S3_ENDPOINT: 'https://files.example' }, 'DOCUMENTS_S3_ACCESS_KEY_ID'],
+    [{ ...base, HARTROLL_SCANNER: 'clamd' }, 'HARTROLL_SCANNER'],
     [{ ...base, HARTROLL_TESTING: '1' }, 'HARTROLL_TESTING'],
   ] as [Record<string, string | undefined>, string][])('refuses a wrong value with one line that names it (%#)', (env, name) => {
     const line = refusal(env)
