@@ -49,6 +49,20 @@ describe('the rough score', () => {
     await fits(page, 'sheet', [...WIDTHS, 360])
   })
 
+  test('draws the animal from its numbers, lights the line that is measured, and goes to what is touched', async () => {
+    const page = await browser.open()
+    await visit(page, '/measure/mule-deer-typical')
+    await page.getByText('The animal draws itself as you write its numbers.').waitFor()
+    await typeExample(page)
+    const drawing = page.getByRole('img', { name: /^Antlers of Mule deer, typical, seen from the front: 5 × 6 points/ })
+    await drawing.waitFor()
+    await field(page, 'Second point, back fork (G2), the animal\'s left').focus()
+    await page.getByText('The tape begins at the full dot and ends at the open one.').waitFor()
+    expect(await drawing.locator('circle').count()).toBe(2)
+    await drawing.locator('g.cursor-pointer').last().click({ force: true })
+    expect(await page.evaluate(() => document.activeElement?.getAttribute('aria-label') ?? document.activeElement?.id)).toMatch(/mainBeam|Main beam/)
+  })
+
   test('answers gross, frame, net, margins and ranks of both classes', async () => {
     const page = await browser.open()
     await visit(page, '/measure/mule-deer-typical')
