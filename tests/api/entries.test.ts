@@ -141,4 +141,19 @@ describe('a walk-in', () => {
     expect((await other.post('/api/entries/claim').send({ code: made.body.claimCode })).status).toBe(422)
     expect((await owner.post('/api/entries/for').send(FACTS)).status).toBe(403)
   })
+
+  it('is one entry under one key through a kill, and has a code to hand out', async () => {
+    const shop = await app.signInAs('shop')
+    const send = () => shop.post('/api/entries/for').set('idempotency-key', 'killed-at-the-counter').send(FACTS)
+    const first = await send()
+    // A kill -9 before the answer was kept leaves a key that is "running"; it is let go after two minutes.
+    await app.db('idempotency_keys').where({ key: 'killed-at-the-counter' }).update({ state: 'running', status: null, response: null })
+    expect((await send()).body).toMatchObject({ status: 409, code: 'idempotency_in_flight' })
+    app.clock.pass(3 / 1440)
+    const again = await send()
+    expect([again.status, again.body.id]).toEqual([201, first.body.id])
+    expect(await app.db('entries').where({ uid: first.body.id }).select('id')).toHaveLength(1)
+    expect((await owner.post('/api/entries/claim').send({ code: again.body.claimCode })).body).toMatchObject({ id: first.body.id, isOwn: true })
+    expect((await other.post('/api/entries/claim').send({ code: first.body.claimCode })).status).toBe(422)
+  })
 })

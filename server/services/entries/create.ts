@@ -17,6 +17,7 @@ import { momentOf, newUid, type Moment } from '../moment'
 import { figuresOf, hasReadings } from '../sheets/read'
 import { loadCurrentWorkflow, type Workflow } from '../workflow/load'
 import { findKeys, loadContext } from './context'
+import { mintClaimCode } from './claimCode'
 import type { EffectContext } from './effects/context'
 import { loadCandidate, loadFacts } from './facts'
 import { factRow } from './factRow'
@@ -41,12 +42,15 @@ interface Begin {
 
 const contentHash = (input: object) => createHash('sha256').update(canonicalText(JSON.parse(JSON.stringify(input)) as Json)).digest('hex')
 
-/** An entry of the same id: the answer where owner and content are the same, a refusal otherwise. */
-async function sameAgain(registry: Registry, actor: ActiveActor, uid: string, hash: string): Promise<Created | null> {
+/**
+ * An entry of the same id: the answer where owner and content are the same, a refusal otherwise. Whoever began it for somebody
+ * is told a new code while nobody has claimed it: the first one may never have reached them, and is kept as a hash alone.
+ */
+async function sameAgain(registry: Registry, actor: ActiveActor, uid: string, hash: string, moment: Moment): Promise<Created | null> {
   const entry = await findEntry(registry.db, uid)
   if (!entry) return null
   if (entry.begun_by_user_id !== actor.userId || entry.client_content_hash !== hash) throw new DomainError('duplicate', { fields: [{ path: 'id', code: 'taken' }] })
-  return { uid, isNew: false, told: {} }
+  return { uid, isNew: false, told: entry.owner_user_id === null ? { claimCode: await mintClaimCode(registry.db, uid, moment) } : {} }
 }
 
 async function keepRough(trx: Knex.Transaction, entryId: number, ownerUserId: number | null, category: string, rough: Record<string, unknown>, moment: Moment): Promise<void> {
@@ -113,7 +117,7 @@ async function beginAs(registry: Registry, actor: ActiveActor, start: Begin): Pr
   const moment = await momentOf(registry)
   const uid = start.input.id ?? newUid(moment.now)
   const hash = contentHash({ ...start.input, how: start.transition })
-  const again = start.input.id ? await sameAgain(registry, actor, uid, hash) : null
+  const again = start.input.id ? await sameAgain(registry, actor, uid, hash, moment) : null
   if (again) return again
   const workflow = await loadCurrentWorkflow(registry.db)
   try {
@@ -122,7 +126,7 @@ async function beginAs(registry: Registry, actor: ActiveActor, start: Begin): Pr
   catch (error) {
     // Two of the same request at once: the one that came second is answered as the first.
     if (start.input.id && error instanceof DomainError && error.code === 'duplicate') {
-      const first = await sameAgain(registry, actor, uid, hash)
+      const first = await sameAgain(registry, actor, uid, hash, moment)
       if (first) return first
     }
     throw error

@@ -1,25 +1,17 @@
 import { checkMeasurements, classesFor, currentDefinition, NOTHING_MEASURED, type Category, type SheetDefinition } from '../../../../shared/domain/measuring/index'
-import { insertClaim } from '../../../repositories/claims'
 import { findOpenSheet, findSheetById, insertSheet, nextSheetNumber, updateSheet } from '../../../repositories/sheets'
 import { newUid } from '../../moment'
-import { newClaimCode } from '../claimCode'
+import { mintClaimCode } from '../claimCode'
 import { definitionOf } from '../context'
 import { sayNet } from '../say'
-import { tokenHash, TOKENS } from '../../notices/mint'
 import { answersOf, figuresOf, hasReadings, readSheet } from '../../sheets/read'
 import { sheetHash } from '../../sheets/sheetHash'
 import type { SheetsRow } from '../../../../db/tables'
 import type { Json } from '../../../../shared/domain/canonical'
-import { sqlTime } from '../../../../db/time'
 import type { Effect, EffectContext } from './context'
 
 export const makeClaimCode: Effect = async ({ trx, context, moment, told }) => {
-  const code = newClaimCode()
-  told.claimCode = code
-  await insertClaim(trx, {
-    token_hash: tokenHash(code), payload: JSON.stringify({ entry: context.entry.uid }), created_at: moment.at,
-    expires_at: sqlTime(new Date(moment.now.getTime() + TOKENS.claim.livesMs)),
-  })
+  told.claimCode = await mintClaimCode(trx, context.entry.uid, moment)
 }
 
 export const assignMeasurer: Effect = ({ input, patch, args, facts, holders, move }) => {
